@@ -1,0 +1,27 @@
+# Writes one C++ source that holds the bytes of a file (IN), or of several (ALL, separated by |).
+function(as_bytes path result)
+  file(READ ${path} hex HEX)
+  string(REGEX REPLACE "([0-9a-f][0-9a-f])" "0x\\1," bytes "${hex}")
+  string(REGEX REPLACE "((0x..,){32})" "\\1\n" bytes "${bytes}")
+  set(${result} "${bytes}" PARENT_SCOPE)
+endfunction()
+
+if(DEFINED IN)
+  as_bytes(${IN} bytes)
+  file(WRITE ${OUT} "#include \"wave/embedded.hpp\"\nnamespace gg::embedded {\nstatic const unsigned char bytes[] = {\n${bytes}0};\n"
+    "std::string_view ${SYMBOL}() { return {reinterpret_cast<const char*>(bytes), sizeof bytes - 1}; }\n}\n")
+else()
+  string(REPLACE "|" ";" paths "${ALL}")
+  set(arrays "")
+  set(rows "")
+  set(n 0)
+  foreach(path IN LISTS paths)
+    as_bytes(${path} bytes)
+    get_filename_component(name ${path} NAME)
+    string(APPEND arrays "static const unsigned char bytes${n}[] = {\n${bytes}0};\n")
+    string(APPEND rows "{\"${name}\", {reinterpret_cast<const char*>(bytes${n}), sizeof bytes${n} - 1}},\n")
+    math(EXPR n "${n} + 1")
+  endforeach()
+  file(WRITE ${OUT} "#include \"wave/embedded.hpp\"\nnamespace gg::embedded {\n${arrays}"
+    "std::span<const File> ${SYMBOL}() {\nstatic const File files[] = {\n${rows}{{}, {}}};\nreturn {files, ${n}};\n}\n}\n")
+endif()
