@@ -52,7 +52,10 @@ std::optional<double> number_at(const Plan& plan, std::string_view key);
 
 /// Sets a number by key. Returns empty on success, else one sentence that says what is wrong and what would be right;
 /// the plan is then unchanged. Setting a likely value past an end of its range moves that end along.
-/// Whole-number fields are rounded.
+/// Whole-number fields are rounded, angles are wrapped into one turn (a half turn for the target's) and kept to 1e-9 of a
+/// degree, other numbers are kept to 12 digits: what is shown, kept and filed is then the same number.
+/// "lanes.width" and "lanes.height" stretch the site's outline to that extent.
+/// Numbers in sentences stand as tokens (survey/words.hpp).
 std::string set_number(Plan& plan, std::string_view key, double value);
 
 /// One choice of a plan: "target.filling", "target.shape", "antenna.family", "ground.N.material", "lanes.both_ways".
@@ -67,6 +70,15 @@ std::vector<Choice> choices_of(const Plan& plan);
 std::optional<std::string> choice_at(const Plan& plan, std::string_view key);
 /// Sets a choice by option id; a material choice resets that layer's inputs to the catalogue's ranges. Same return as above.
 std::string set_choice(Plan& plan, std::string_view key, std::string_view option);
+
+constexpr int most_layers = 8;
+/// Splits layer `above` in two: a copy of it, of the same thickness, comes in below. Same return as set_number.
+std::string add_layer(Plan& plan, int above);
+std::string remove_layer(Plan& plan, int index);
+
+/// The plan with every part that it does not use at rest (the last layer's thickness, inputs that a material does not take,
+/// the own filling of a target that has none) and its numbers kept as set_number keeps them. All setters keep a plan so.
+Plan at_rest(Plan plan);
 
 /// Everything wrong with a plan, one sentence each; empty means it can be computed as it stands.
 std::vector<std::string> faults_of(const Plan& plan);
