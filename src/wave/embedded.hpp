@@ -9,8 +9,8 @@ struct File {
     std::string_view name, bytes;
 };
 
-std::string_view catalogue_json();         ///< assets/catalogue.json
-std::span<const File> demo_files_json();   ///< assets/demo-*.json, by name
-std::string_view font_ttf();               ///< the subset typeface, built from its package
+std::string_view catalogue_json();        ///< assets/catalogue.json
+std::span<const File> demo_files_json();  ///< assets/demo-*.json, by name
+std::string_view font_ttf();              ///< the subset typeface, built from its package
 
 }  // namespace gg::embedded

@@ -14,6 +14,8 @@ std::vector<double> inverse(std::span<const Complex> half, std::size_t n);
 /// Complex transforms, forward without and inverse with 1/n.
 std::vector<Complex> forward(std::span<const Complex> values);
 std::vector<Complex> inverse(std::span<const Complex> values);
+/// Smallest low * 2^m that is at least `wanted`, but no more than about `high`: a fast length.
+std::size_t length_of_two(double wanted, std::size_t low, std::size_t high);
 /// Envelope (magnitude of the analytic signal), same length.
 std::vector<double> envelope(std::span<const double> values);
 

@@ -24,19 +24,19 @@ enum class Model : std::uint8_t {
 
 /// The inputs a model may take. Units: SI, except temperature (degrees Celsius) and salinity (g/kg).
 enum class Input : std::uint8_t {
-    permittivity,    ///< relative, 1 to 100
-    conductivity,    ///< S/m, 0 to 10
-    water,           ///< volumetric water content, m3/m3, 0 to 1
-    temperature,     ///< degrees Celsius, -60 to 60
-    salinity,        ///< g/kg, 0 to 40
-    sand,            ///< mass fraction, 0 to 1
-    clay,            ///< mass fraction, 0 to 1; sand + clay <= 1
-    density,         ///< dry bulk density, kg/m3
-    porosity,        ///< 0 to 1
-    saturation,      ///< share of the pores that water fills, 0 to 1
-    grain,           ///< relative permittivity of the grains, 2 to 12
+    permittivity,       ///< relative, 1 to 100
+    conductivity,       ///< S/m, 0 to 10
+    water,              ///< volumetric water content, m3/m3, 0 to 1
+    temperature,        ///< degrees Celsius, -60 to 60
+    salinity,           ///< g/kg, 0 to 40
+    sand,               ///< mass fraction, 0 to 1
+    clay,               ///< mass fraction, 0 to 1; sand + clay <= 1
+    density,            ///< dry bulk density, kg/m3
+    porosity,           ///< 0 to 1
+    saturation,         ///< share of the pores that water fills, 0 to 1
+    grain,              ///< relative permittivity of the grains, 2 to 12
     pore_conductivity,  ///< S/m of the pore water, at low frequency
-    cementation      ///< Archie's m, 1.2 to 2.6
+    cementation         ///< Archie's m, 1.2 to 2.6
 };
 constexpr int input_count = 13;
 
@@ -68,8 +68,8 @@ struct Permittivity {
 /// Complex relative permittivity, conduction loss included.
 /// @param frequency  Hz, > 0
 /// Outside the material's band the model is carried on and flagged Issue::outside_band; where the model gives no
-/// physical value (negative real part, NaN) the value is clamped to eps' >= 1, eps'' >= 0 and flagged Issue::model_fails;
-/// an input outside its range gives Issue::out_of_range and the nearest legal input's value.
+/// physical value (negative real part, NaN) the value is clamped to eps' >= 1, eps'' >= 0 and flagged
+/// Issue::model_fails; an input outside its range gives Issue::out_of_range and the nearest legal input's value.
 Permittivity permittivity(const Material& material, double frequency);
 
 /// Whether `model` uses `input`: what a form has to ask for.

@@ -23,14 +23,16 @@ PlaneWave plane_wave(Permittivity permittivity, double frequency);
 /// The named comparison, not used elsewhere: 1636.12 sigma / sqrt(eps') dB/m, sigma in S/m.
 double low_loss_attenuation_db(double conductivity, double permittivity);
 
-/// Reflection of a plane wave from medium 1 on medium 2 at incidence angle (rad, may be complex through sin > 1).
+/// Reflection of a plane wave from medium 1 on medium 2 at incidence angle (rad, 0 to pi/2 in medium 1).
 struct Fresnel {
     Complex te;  ///< electric field across the plane of incidence
     Complex tm;  ///< magnetic field convention: opposite sign to te at normal incidence
 };
 Fresnel fresnel(Complex permittivity1, Complex permittivity2, double angle);
 
-/// Reflection and transmission of a slab of `thickness` m between two media, te and tm; exact.
+/// Reflection and transmission of a slab of `thickness` m between two media; exact, multiple echoes included.
+/// Transmission is the ratio of the electric field for te and of the magnetic field for tm. Input that is not finite
+/// gives zeros.
 struct SlabEcho {
     Fresnel reflection, transmission;
 };

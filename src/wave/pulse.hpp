@@ -13,7 +13,7 @@ enum class PulseFamily : std::uint8_t { ricker, gaussian_derivative };
 struct PulseShape {
     PulseFamily family = PulseFamily::ricker;
     double centre_frequency = 400e6;  ///< Hz: the frequency fp at which the sent spectrum peaks
-    double bandwidth = 1.34;          ///< -10 dB width over the -10 dB band's middle; gaussian_derivative only, 0.3 to 1.6
+    double bandwidth = 1.34;  ///< -10 dB width over the -10 dB band's middle; gaussian_derivative only, 0.3 to 1.6
     bool operator==(const PulseShape&) const = default;
 };
 
@@ -40,20 +40,23 @@ struct Signal {
     double time(std::size_t i) const { return start + static_cast<double>(i) * step; }
 };
 
-/// The sent pulse, zero phase, centred on t = 0 with peak 1, on a grid fine enough to draw (>= 24 samples a period at fp).
+/// The sent pulse, zero phase, centred on t = 0 with peak 1, on a grid fine enough to draw (>= 24 samples a period at
+/// fp).
 Signal sent_pulse(const PulseShape& shape);
 
-/// The pulse back from a reflector at `depth` straight below, relative to a sent peak of 1: the exact two-way plane-wave
-/// path exp(-2 j sum k_i h_i) in the frequency domain; interface losses and spreading are not in it (see survey).
+/// The pulse back from a reflector at `depth` straight below, relative to a sent peak of 1: the exact two-way
+/// plane-wave path exp(-2 j sum k_i h_i) in the frequency domain; interface losses and spreading are not in it (see
+/// survey).
 struct Returned {
     Signal signal;           ///< on the true time axis (arrival near the two-way time)
     Signal envelope;         ///< same grid
     double arrival = 0.0;    ///< s, time of the envelope's peak
     double amplitude = 0.0;  ///< envelope peak, of a sent peak of 1
-    double centre_frequency = 0.0;  ///< Hz, mean of the amplitude spectrum over the power-weighted band (spectral centroid)
-    double peak_frequency = 0.0;    ///< Hz, where the returned spectrum peaks
-    Band band;               ///< -10 dB band of the returned spectrum
-    double width = 0.0;      ///< s, envelope full width at half its peak
+    double centre_frequency =
+        0.0;  ///< Hz, mean of the amplitude spectrum over the power-weighted band (spectral centroid)
+    double peak_frequency = 0.0;  ///< Hz, where the returned spectrum peaks
+    Band band;                    ///< -10 dB band of the returned spectrum
+    double width = 0.0;           ///< s, envelope full width at half its peak
     Issue issue = Issue::none;
 };
 Returned returned_pulse(const Stack& stack, double depth, const PulseShape& shape);

@@ -17,6 +17,8 @@ enum class Issue : std::uint8_t {
 
 /// One sentence, in plain words, for an issue; empty for Issue::none.
 std::string_view sentence(Issue issue);
+/// The graver of two issues: what a result built on both has to say.
+Issue worse(Issue a, Issue b);
 
 /// A number that is always finite. When `issue` is not none or outside_band, `value` is a stand-in (usually 0).
 struct Value {
