@@ -93,8 +93,11 @@ def fields(scene, cell, layers, targets, transmitter, receivers):
         geometry.append(mp.Block(mp.Vector3(mp.inf, 2 * bottom - down, mp.inf), center=middle, material=medium(layer)))
         down += layer.get("thickness", 0)
     for t in targets:
-        matter = mp.metal if t.get("metal") else medium(t)
-        geometry.append(mp.Cylinder(radius=t["radius"], height=mp.inf, center=shift(t["x"], t["depth"]), material=matter))
+        wall = t.get("wall", {"thickness": 0})
+        rings = [(t["radius"], wall)] if wall["thickness"] else []
+        for radius, matter in rings + [(t["radius"] - wall["thickness"], t)]:
+            filling = mp.metal if matter.get("metal") else medium(matter)
+            geometry.append(mp.Cylinder(radius=radius, height=mp.inf, center=shift(t["x"], t["depth"]), material=filling))
     f = scene["peak_frequency"]
     component = mp.Ez if scene["polarisation"] == "along" else mp.Ex
     current = mp.CustomSource(lambda t: ricker(f * t / LIGHT - DELAY), is_integrated=False)
