@@ -35,25 +35,6 @@ std::string outline_fault(const std::vector<SitePoint>& outline) {
     return {};
 }
 
-void number_faults(const Plan& plan, std::vector<std::string>& faults) {
-    for (const Field& field : fields_of(plan)) {
-        if (field.key == "lanes.width" || field.key == "lanes.height") continue;  // the outline speaks for them
-        const auto fails = [&](const std::string& key) {
-            const double x = number_at(plan, key).value_or(0.0);
-            return !(x >= field.low && x <= field.high);
-        };
-        const std::string what = field.label + " (" + field.key + ")";
-        if (fails(field.key) || (field.is_range && (fails(field.key + ".low") || fails(field.key + ".high")))) {
-            faults.push_back(what + " must be from " + token(field.low, field.quantity) + " to " +
-                             token(field.high, field.quantity) + ".");
-        } else if (field.is_range) {
-            const double likely = *number_at(plan, field.key);
-            if (*number_at(plan, field.key + ".low") > likely || *number_at(plan, field.key + ".high") < likely)
-                faults.push_back(what + ": its likely value must lie between its low and its high end.");
-        }
-    }
-}
-
 void matter_faults(const Matter& matter, const std::string& where, std::vector<std::string>& faults) {
     const CatalogueRow* row = find_material(matter.material);
     if (!row && matter.material != "own") {
@@ -80,7 +61,7 @@ std::vector<std::string> faults_of(const Plan& plan) {
     for (std::size_t i = 0; i < plan.ground.size(); ++i)
         matter_faults(plan.ground[i].matter, "layer " + std::to_string(i + 1), faults);
     if (plan.target.filling == Filling::own) matter_faults(plan.target.own, "the target", faults);
-    number_faults(plan, faults);
+    for (std::string& fault : number_faults(plan)) faults.push_back(std::move(fault));
 
     const Target& target = plan.target;
     if (target.shape != TargetShape::flat && target.count > 1 && target.gap < target.size)

@@ -217,7 +217,8 @@ Field field_of(const Row& row, const Slot& slot) {
             row.low,
             row.high,
             tick(row, get(slot, Part::likely)),
-            std::is_same_v<Slot, Range>};
+            std::is_same_v<Slot, Range>,
+            !std::is_arithmetic_v<Slot> && !std::is_same_v<Slot, Range>};
 }
 
 void rest(Matter& matter) {
@@ -279,6 +280,23 @@ std::string set_number(Plan& plan, std::string_view key, double value) {
                     token(row.high, row.quantity) + ".";
     });
     return fault;
+}
+
+std::vector<std::string> number_faults(const Plan& plan) {
+    std::vector<std::string> faults;
+    each_number(plan, [&](const Row& row, const auto& slot) {
+        using Slot = std::decay_t<decltype(slot)>;
+        const auto fails = [&](Part part) { return !(get(slot, part) >= row.low && get(slot, part) <= row.high); };
+        if (!std::is_arithmetic_v<Slot> && !std::is_same_v<Slot, Range>)
+            return;  // faults_of looks at the outline itself
+        const std::string what = std::string(row.label) + " (" + std::string(row.key) + ")";
+        if (fails(Part::low) || fails(Part::likely) || fails(Part::high))
+            faults.push_back(what + " must be from " + token(row.low, row.quantity) + " to " +
+                             token(row.high, row.quantity) + ".");
+        else if (get(slot, Part::low) > get(slot, Part::likely) || get(slot, Part::high) < get(slot, Part::likely))
+            faults.push_back(what + ": its likely value must lie between its low and its high end.");
+    });
+    return faults;
 }
 
 Plan at_rest(Plan plan) {
