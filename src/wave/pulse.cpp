@@ -30,7 +30,7 @@ Band edges(double order, double drop) { return unit_edges(2.0 * drop / order); }
 
 double log_spectrum(double order, double x) { return order * (std::log(x) + 0.5 * (1.0 - x * x)); }
 
-bool legal(const PulseShape& shape) { return shape.centre_frequency > 0.0 && std::isfinite(shape.centre_frequency); }
+bool legal(const PulseShape& shape) { return shape.centre_frequency >= 1e3 && shape.centre_frequency <= 1e13; }
 
 }  // namespace
 
@@ -66,7 +66,7 @@ double spectrum_at(const PulseShape& shape, double frequency) {
 }
 
 Signal sent_pulse(const PulseShape& shape) {
-    const double fp = legal(shape) ? shape.centre_frequency : 1.0, n = order_of(shape);
+    const double fp = legal(shape) ? shape.centre_frequency : 1e9, n = order_of(shape);
     // The envelope falls like a Gaussian of sqrt(2 n) / (2 pi fp): 4.5 of them and a period on either side.
     const double half = (1.0 + std::sqrt(n)) / fp, step = 1.0 / (32.0 * fp);
     const std::size_t size = length_of_two(3.0 * half / step, 256, 4096);

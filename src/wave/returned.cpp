@@ -70,7 +70,7 @@ double spectrum_area(const PulseShape& shape) {
 struct Look {
     double peak = 0.0, low = 0.0, high = 0.0;  // Hz: peak, and where the spectrum falls to `silent`
     double width = 0.0;                        // Hz, -10 dB
-    double first = 0.0, last = 0.0;            // s, group delays within 40 dB of the peak
+    double first = 0.0, last = 0.0;            // s, group delays down to `silent`
     double delay = 0.0;                        // s, at the peak
 };
 
@@ -108,21 +108,24 @@ Look look_along(const Path& path, const PulseShape& shape) {
     };
     look.delay = look.first = look.last = delay(std::min(top, count - 2));
     for (std::size_t i = 0; i + 1 < count; ++i) {
-        if (point[i].level < point[top].level - 4.6) continue;
+        if (point[i].level < point[top].level - silent) continue;
         look.first = std::min(look.first, delay(i));
         look.last = std::max(look.last, delay(i));
     }
     return look;
 }
 
-/// Frequency near `f` where the spectrum peaks: parabolas through three points, ever closer.
+/// Frequency near `f` where the spectrum peaks: parabolas through three points, ever closer, each kept only if it
+/// climbs.
 double climb(const Path& path, double f, double span) {
-    for (int round = 0; round < 3; ++round) {
-        const double a = path.at(f - span).level, b = path.at(f).level, c = path.at(f + span).level;
-        const double bend = a - 2.0 * b + c;
-        if (!(bend < 0.0)) break;
-        f += std::clamp(0.5 * (a - c) / bend, -1.0, 1.0) * span;
-        span *= 0.2;
+    double level = path.at(f).level;
+    for (int round = 0; round < 2; ++round, span *= 0.15) {
+        const double a = path.at(f - span).level, c = path.at(f + span).level, bend = a - 2.0 * level + c;
+        if (!(bend < 0.0)) continue;
+        const double next = f + std::clamp(0.5 * (a - c) / bend, -1.0, 1.0) * span, there = path.at(next).level;
+        if (!(there > level)) continue;
+        f = next;
+        level = there;
     }
     return f;
 }
@@ -167,7 +170,9 @@ double half_width(const Signal& envelope, std::size_t top, double peak) {
 Returned returned_pulse(const Stack& stack, double depth, const PulseShape& shape) {
     Returned result;
     const bool finite_input = std::isfinite(depth) && std::isfinite(shape.centre_frequency);
-    if (!finite_input || !(depth >= 0.0) || !(shape.centre_frequency > 0.0) || stack.slabs.empty()) {
+    const bool sensible =
+        depth >= 0.0 && depth <= 1e4 && shape.centre_frequency >= 1e3 && shape.centre_frequency <= 1e13;
+    if (!sensible || stack.slabs.empty()) {
         result.signal = sent_pulse(shape);
         result.envelope = {result.signal.start, result.signal.step, envelope(result.signal.values)};
         result.issue = finite_input ? Issue::out_of_range : Issue::not_a_number;
@@ -178,48 +183,61 @@ Returned returned_pulse(const Stack& stack, double depth, const PulseShape& shap
     result.issue = path.issue();
 
     // The record repeats after `span`: 12 over the -10 dB width leaves less than 1e-3 of the peak to wrap around.
-    const double lead = 5.0 / look.width, span = 12.0 / look.width + (look.last - look.first);
+    // Past some 500 dB of loss the spectrum is a line so thin that the longest record cannot hold its echo: cut there.
+    constexpr std::size_t longest = 4096;
+    const double lead = 5.0 / look.width;
+    const double span =
+        std::min(12.0 / look.width + look.last - look.first, static_cast<double>(longest / 2 - 1) / look.high);
     const double start = std::min(look.delay, look.first + lead) - lead;
-    const std::size_t size = length_of_two(span * std::max(24.0 * look.peak, 2.2 * look.high), 256, 4096);
+    const std::size_t size = length_of_two(span * std::max(24.0 * look.peak, 2.2 * look.high), 256, longest);
     const double df = 1.0 / span, dt = span / static_cast<double>(size);
-    const auto first = static_cast<std::size_t>(std::max(1.0, std::ceil(look.low / df)));
-    const auto last = std::min(static_cast<std::size_t>(look.high / df), size / 2 - 1);
+    const auto last = static_cast<std::size_t>(std::max(1.0, std::floor(look.high / df)));
+    const auto first = std::min(static_cast<std::size_t>(std::max(1.0, std::ceil(look.low / df))), last);
 
-    result.peak_frequency = climb(path, look.peak, std::min(0.5 * df, 0.4 * look.peak));
-    const double top_level = path.at(result.peak_frequency).level;
+    std::vector<Path::Point> points(size);
+    std::size_t highest = first;
+    for (std::size_t k = first; k <= last; ++k) {
+        points[k] = path.at(static_cast<double>(k) * df);
+        if (points[k].level > points[highest].level) highest = k;
+    }
+    result.peak_frequency = climb(path, static_cast<double>(highest) * df, 0.5 * df);
+    const double top_level = path.at(result.peak_frequency).level, loudest = points[highest].level;
 
     std::vector<Complex> spectrum(size);
     double power = 0.0, moment = 0.0;
     for (std::size_t k = first; k <= last; ++k) {
-        const double f = static_cast<double>(k) * df;
-        const auto [level, lag] = path.at(f);
-        const double amplitude = std::exp(level - top_level);
-        spectrum[k] = std::polar(amplitude, 2.0 * pi * f * start - lag);
+        const double f = static_cast<double>(k) * df, amplitude = std::exp(points[k].level - loudest);
+        spectrum[k] = std::polar(amplitude, 2.0 * pi * f * start - points[k].lag);
         power += amplitude * amplitude;
         moment += f * amplitude * amplitude;
     }
-    result.centre_frequency = power > 0.0 ? moment / power : result.peak_frequency;
+    result.centre_frequency = moment / power;
     result.band = {edge(path, result.peak_frequency, look.low, top_level - ten_db),
                    edge(path, result.peak_frequency, look.high, top_level - ten_db)};
 
     // The one-sided sum is the analytic signal itself: its real part the pulse, its magnitude the envelope.
     const std::vector<Complex> analytic = inverse(spectrum);
-    const double one = df * static_cast<double>(size) / spectrum_area(shape);
-    const double scale = one * std::exp(std::max(top_level, faintest));
-    result.signal = {start, dt, std::vector<double>(size)};
-    result.envelope = result.signal;
+    Signal& e = result.envelope;
+    e = {start, dt, std::vector<double>(size)};
     std::size_t top = 0;
     for (std::size_t i = 0; i < size; ++i) {
-        result.signal.values[i] = scale * analytic[i].real();
-        result.envelope.values[i] = scale * std::abs(analytic[i]);
-        if (result.envelope.values[i] > result.envelope.values[top]) top = i;
+        e.values[i] = std::abs(analytic[i]);
+        if (e.values[i] > e.values[top]) top = i;
     }
-    const std::vector<double>& e = result.envelope.values;
-    const double a = e[(top + size - 1) % size], b = e[top], c = e[(top + 1) % size], bend = a - 2.0 * b + c;
-    const double shift = bend < 0.0 ? std::clamp(0.5 * (a - c) / bend, -0.5, 0.5) : 0.0;
-    result.arrival = result.envelope.time(top) + shift * dt;
-    result.amplitude = b - 0.25 * (a - c) * shift;
-    result.width = half_width(result.envelope, top, result.amplitude);
+    const double a = e.values[(top + size - 1) % size], b = e.values[top], c = e.values[(top + 1) % size];
+    const double bend = a - 2.0 * b + c, shift = bend < 0.0 ? std::clamp(0.5 * (a - c) / bend, -0.5, 0.5) : 0.0;
+    const double peak = b - 0.25 * (a - c) * shift;
+    result.arrival = e.time(top) + shift * dt;
+    result.width = half_width(e, top, peak);
+
+    // All of the above at a spectral peak of 1, so that it holds however deep the loss; only now the true scale.
+    const double scale = df * static_cast<double>(size) / spectrum_area(shape) * std::exp(std::max(loudest, faintest));
+    result.amplitude = scale * peak;
+    result.signal = {start, dt, std::vector<double>(size)};
+    for (std::size_t i = 0; i < size; ++i) {
+        result.signal.values[i] = scale * analytic[i].real();
+        e.values[i] *= scale;
+    }
     return result;
 }
 
