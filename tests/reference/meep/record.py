@@ -4,10 +4,13 @@ Afresh, all scenes (about an hour on one core) or the ones named:
     /usr/bin/python3 tests/reference/meep/record.py [NAME ...]
 Needs Debian's python3-meep, python3-numpy, python3-scipy and python3-matplotlib.
 
-Writes traces/NAME_fine.csv and traces/NAME_coarse.csv (time in ns, then one column per antenna position, V/m, rounded to
-1e-6 of the scene's peak) and, in recorded.json, how far the two grids are apart: RMS(fine - coarse) / RMS(fine).
-The solver's error falls with the square of the cell, so the fine grid's own error is about 0.8 of that; at a metal wall,
-which the solver draws in whole cells, it falls only with the cell, and is up to twice that.
+Writes traces/NAME_fine.csv and traces/NAME_coarse.csv (time in ns, then one column per antenna position and
+separation, V/m, rounded to 1e-6 of the scene's peak) and recorded.json, where
+  rms_between_grids  RMS(fine - coarse) / RMS(fine)
+  beyond_fine        what fine + beyond_fine (fine - coarse) extrapolates to a cell of nothing: 0.8 where the solver's error falls
+                     with the square of the cell, 2 where there is metal, whose wall it draws in whole cells and whose error falls
+                     with the cell
+  rms_error_of_fine  beyond_fine * rms_between_grids, the fine grid's own error
 
 The source is the Ricker current of scenes.json itself, so nothing has to be deconvolved. Solver units: length 1 m, c = 1,
 mu0 = eps0 = 1; a field in them times the impedance of vacuum is V/m per ampere. Conductivity is sigma / (eps0 eps_r) * 1 m / c.
@@ -29,6 +32,7 @@ EPS0 = 8.8541878128e-12
 IMPEDANCE = 376.730313668
 COURANT = 0.65  # of a cell over c; 0.707 is the limit in two dimensions
 DELAY = 1.6  # periods of the peak frequency before the Ricker's peak, where it is 1e-9 of it
+SMOOTH, STAIRS = 1 / (1.5**2 - 1), 1 / (1.5 - 1)  # beyond_fine for an error that goes with cell^2, with cell
 HERE = pathlib.Path(__file__).resolve().parent
 
 
@@ -42,32 +46,29 @@ def ricker(t):
     return (1 - 2 * u) * math.exp(-u)
 
 
-def box_of(scene, cell):
-    """Left, right, top and bottom (depth) of what is computed and the absorbing rim's width, on whole cells of both grids."""
+def box_of(scene):
+    """Left, right, top and bottom (depth) of what is computed, on whole cells of both grids, and the absorbing rim's width."""
     wave = LIGHT / scene["peak_frequency"]
-    reach = max(abs(x) + s / 2 for x in scene["positions"] for s in scene["separations"])
-    left = min([x - s / 2 for x in scene["positions"] for s in scene["separations"]] + [t["x"] - t["radius"] for t in scene["targets"]])
-    right = max([reach] + [t["x"] + t["radius"] for t in scene["targets"]])
-    deepest = sum(layer.get("thickness", 0) for layer in scene["layers"])
-    deepest = max([deepest] + [t["depth"] + t["radius"] for t in scene["targets"]])
+    ends = [x + side * s / 2 for x in scene["positions"] for s in scene["separations"] for side in (-1, 1)]
+    ends += [t["x"] + side * t["radius"] for t in scene["targets"] for side in (-1, 1)]
+    deepest = max([sum(layer.get("thickness", 0) for layer in scene["layers"])] + [t["depth"] + t["radius"] for t in scene["targets"]])
     rim = 0.25 * wave
-    air, side, below = 0.12 * wave, 0.08 * wave, 0.06 * wave
-    grain = 4 * cell
-    out = lambda v: grain * math.ceil(v / grain - 1e-9)
-    return -out(-left + side + rim), out(right + side + rim), -out(scene["height"] + air + rim), out(deepest + below + rim), rim
+    grain = 4 * scene["cell"]
+    outward = lambda v: grain * math.ceil(v / grain - 1e-9)
+    left, right = -outward(-min(ends) + 0.08 * wave + rim), outward(max(ends) + 0.08 * wave + rim)
+    return left, right, -outward(scene["height"] + 0.12 * wave + rim), outward(deepest + 0.06 * wave + rim), rim
 
 
 def runs_of(scene):
     """Transmitter positions and, for each, the traces it gives: one run gives every receiver, a swapped pair is the same trace
     (reciprocity), and so is the mirrored pair where the targets mirror onto themselves."""
-    place = lambda t: (round(t["depth"], 9), t["radius"], t.get("metal", False), t.get("permittivity"))
-    ahead = sorted((round(t["x"], 9), place(t)) for t in scene["targets"])
-    mirrored = sorted((round(-t["x"], 9), place(t)) for t in scene["targets"])
+    faced = lambda side: sorted(json.dumps(dict(t, x=side * t["x"] + 0), sort_keys=True) for t in scene["targets"])
+    mirrors = faced(1) == faced(-1)
     pairs = []
     for s in scene["separations"]:
         for x in scene["positions"]:
             a, b = round(x - s / 2, 9), round(x + s / 2, 9)
-            pairs.append([(a, b), (b, a)] + ([(-a, -b), (-b, -a)] if ahead == mirrored else []))
+            pairs.append([(a, b), (b, a)] + ([(-a, -b), (-b, -a)] if mirrors else []))
     if not scene["targets"]:  # all places are alike: one transmitter at the left, receivers to its right
         left = -max(scene["separations"]) / 2
         return {left: {i: round(left + s, 9) for i, s in enumerate(scene["separations"])}}
@@ -85,7 +86,7 @@ def runs_of(scene):
 
 def fields(scene, cell, layers, targets, transmitter, receivers):
     """Field at each receiver (rows) against time from the Ricker's peak, V/m, and those times, s."""
-    left, right, top, bottom, rim = box_of(scene, scene["cell"])
+    left, right, top, bottom, rim = box_of(scene)
     shift = lambda x, depth: mp.Vector3(x - (left + right) / 2, (top + bottom) / 2 - depth)
     geometry, down = [], 0.0
     for layer in layers:
@@ -141,7 +142,7 @@ def traces(scene, cell):
 
 def write(path, scene, rows, peak):
     places = 6 - math.ceil(math.log10(peak))
-    heads = [f"{x:g}" for _ in scene["separations"] for x in scene["positions"]]
+    heads = [f"x={x:g} s={s:g}" for s in scene["separations"] for x in scene["positions"]]
     lines = ["time_ns," + ",".join(heads)]
     for n, values in enumerate(rows.T):
         # + 0.0 turns a rounded -0.0 into 0.0
@@ -156,6 +157,7 @@ def record(scene):
     write(HERE / "traces" / f"{scene['name']}_coarse.csv", scene, coarse, peak)
     write(HERE / "traces" / f"{scene['name']}_fine.csv", scene, fine, peak)
     apart = float(np.sqrt(np.mean((fine - coarse) ** 2) / np.mean(fine**2)))
+    beyond = STAIRS if any(t.get("metal") for t in scene["targets"]) else SMOOTH
     book = HERE / "recorded.json"
     recorded = json.loads(book.read_text()) if book.exists() else {}
     recorded[scene["name"]] = {
@@ -164,6 +166,8 @@ def record(scene):
         "fine_cell": round(scene["cell"] / 1.5, 9),
         "peak": float(f"{peak:.6g}"),
         "rms_between_grids": float(f"{apart:.4g}"),
+        "beyond_fine": round(beyond, 6),
+        "rms_error_of_fine": float(f"{beyond * apart:.4g}"),
     }
     book.write_text(json.dumps(recorded, indent=2, sort_keys=True) + "\n")
     print(f"{scene['name']}: grids differ by {100 * apart:.2f} % RMS, {time.time() - start:.0f} s", flush=True)
