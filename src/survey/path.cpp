@@ -1,0 +1,66 @@
+#include "survey/path.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+namespace gg {
+
+void Path::add(double v, double h) {
+    if (!(h > 0.0 && v > 0.0) || count == most) return;
+    speed[count] = v;
+    thickness[count] = h;
+    ++count;
+}
+
+double Path::time_down() const {
+    double t = 0.0;
+    for (int i = 0; i < count; ++i) t += thickness[i] / speed[i];
+    return t;
+}
+
+double Path::depth() const {
+    double z = 0.0;
+    for (int i = 0; i < count; ++i) z += thickness[i];
+    return z;
+}
+
+Leg leg_to(const Path& path, double offset) {
+    // Notation: X offset, q tangent of the angle in the fastest layer, r_i = v_i / v_fastest, m_i = 1 - r_i^2,
+    // x(q) = sum h_i r_i q / sqrt(1 + m_i q^2), cos(angle_i) = sqrt((1 + m_i q^2) / (1 + q^2)).
+    const double X = std::abs(offset);
+    double fastest = 0.0;
+    for (int i = 0; i < path.count; ++i) fastest = std::max(fastest, path.speed[i]);
+    double r[Path::most], m[Path::most];
+    double slope = 0.0;
+    for (int i = 0; i < path.count; ++i) {
+        r[i] = path.speed[i] / fastest;
+        m[i] = 1.0 - r[i] * r[i];
+        slope += path.thickness[i] * r[i];
+    }
+    if (!(slope > 0.0)) return {};
+    double q = X / slope;
+    for (int n = 0; n < 50; ++n) {
+        double x = 0.0, dx = 0.0;
+        for (int i = 0; i < path.count; ++i) {
+            const double root = std::sqrt(1.0 + m[i] * q * q);
+            const double term = path.thickness[i] * r[i] / root;
+            x += term * q;
+            dx += term / (root * root);
+        }
+        const double step = (X - x) / dx;
+        q += step;
+        if (!(std::abs(step) > 1e-12 * q)) break;
+    }
+    Leg leg;
+    const double all = std::sqrt(1.0 + q * q);
+    double cosine = 1.0;
+    for (int i = 0; i < path.count; ++i) {
+        cosine = std::sqrt(1.0 + m[i] * q * q) / all;
+        leg.time += path.thickness[i] / (path.speed[i] * cosine);
+    }
+    const double last = r[path.count - 1] * q / all;
+    leg.angle = std::asin(std::min(1.0, last));
+    return leg;
+}
+
+}  // namespace gg

@@ -1,0 +1,50 @@
+#include "survey/rebuild.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+namespace gg {
+
+RebuildError rebuild_error(const EchoPulse& echo, double interval) {
+    RebuildError worst;
+    if (!(interval > 0.0 && echo.width > 0.0)) return worst;
+    const double dt = std::max(interval, echo.width / 40.0);
+    const double span = std::min(0.95 * echo.reach, 2.0 * std::max(echo.lead, echo.tail) + 2.0 * dt);
+    const int half = std::min(400, static_cast<int>(span / dt) + 1);
+    constexpr int phases = 4, places = 48;
+    const double from = -1.2 * echo.width, to = 1.2 * echo.width;
+    double truth[places + 1];
+    for (int k = 0; k <= places; ++k) truth[k] = echo.trace(from + (to - from) * k / places);
+    std::vector<double> sample(2 * half + 1);
+    for (int phase = 0; phase < phases; ++phase) {
+        const double shift = dt * phase / phases;
+        for (int i = -half; i <= half; ++i) sample[i + half] = echo.trace(i * dt + shift);
+        for (int k = 0; k <= places; ++k) {
+            const double place = (from + (to - from) * k / places - shift) / dt;
+            const int i = static_cast<int>(std::floor(place));
+            if (i < -half || i >= half) continue;
+            const double u = place - i;
+            const double joined = (1.0 - u) * sample[i + half] + u * sample[i + 1 + half];
+            worst.joined = std::max(worst.joined, std::abs(joined - truth[k]));
+            // sinc((t - t_n)/dt): the sine is the same for all n but for its sign.
+            double sum = 0.0;
+            if (u < 1e-9) {
+                sum = sample[i + half];
+            } else {
+                const double s = std::sin(pi * u) / pi;
+                for (int n = -half; n <= half; ++n) sum += ((n - i) % 2 == 0 ? s : -s) * sample[n + half] / (place - n);
+            }
+            worst.band_limited = std::max(worst.band_limited, std::abs(sum - truth[k]));
+        }
+    }
+    return worst;
+}
+
+int samples_for(double window, double interval) {
+    if (!(window > 0.0 && interval > 0.0)) return 2;
+    const double exact = window / interval;
+    // 39 ns at 1/3 ns is 117, which plain floating point makes 118.
+    return static_cast<int>(std::clamp(std::ceil(exact - 1e-9 * exact), 2.0, 1e9));
+}
+
+}  // namespace gg
