@@ -46,17 +46,22 @@ function iconPng(size, share, ground) {
     return execFileSync('rsvg-convert', ['--format=png'], { input: svg });
 }
 
-/// What has to travel with the third-party parts that are inside.
+/// What has to travel with the third-party parts that are inside. Of a package that holds much more than what is used here,
+/// the paragraphs that match.
 function licences() {
+    const documents = '/usr/share/doc';
     const parts = [
-        ['Dear ImGui (graphics of controls)', option('imgui') && join(option('imgui'), 'LICENSE.txt')],
-        ['DejaVu Sans (typeface, cut to the signs used)', '/usr/share/doc/fonts-dejavu-core/copyright'],
-        ['JSON for Modern C++', '/usr/share/doc/nlohmann-json3-dev/copyright'],
-        ['Eigen (transforms)', '/usr/share/doc/libeigen3-dev/copyright'],
-        ['Emscripten and its libraries (run time)', '/usr/share/doc/emscripten/copyright'],
+        ['Dear ImGui (controls)', option('imgui') && join(option('imgui'), 'LICENSE.txt')],
+        ['DejaVu Sans (typeface, cut to the signs used)', `${documents}/fonts-dejavu-core/copyright`],
+        ['JSON for Modern C++', `${documents}/nlohmann-json3-dev/copyright`],
+        ['Eigen (transforms)', `${documents}/libeigen3-dev/copyright`, /^(Files: \*|License: MPL-2)/],
+        ['Emscripten, musl and the LLVM run time (inside the program)', `${documents}/emscripten/copyright`,
+            /^(Files:\s+\*\n|License: (Expat|NCSA~Mozilla)\n)|lib\/(libc\/musl|libcxx|compiler-rt)\//],
     ];
-    return parts.filter(([, file]) => file && existsSync(file))
-        .map(([name, file]) => `==== ${name} ====\n\n${readFileSync(file, 'utf8').trim()}\n`).join('\n\n');
+    return parts.filter(([, file]) => file && existsSync(file)).map(([name, file, wanted]) => {
+        const paragraphs = readFileSync(file, 'utf8').trim().split(/\n\s*\n/).filter((text) => !wanted || wanted.test(text));
+        return `==== ${name} ====\n\n${paragraphs.join('\n\n')}\n`;
+    }).join('\n\n');
 }
 
 const policy = (scripts, styles, workers) =>

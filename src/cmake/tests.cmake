@@ -2,6 +2,10 @@
 enable_testing()
 add_library(gg_test_main OBJECT ${CMAKE_SOURCE_DIR}/tests/main.cpp)
 target_link_libraries(gg_test_main PUBLIC gg_options)
+if(EMSCRIPTEN)  # one script each, which reads the reference tables from the machine's own files
+  target_link_options(gg_test_main PUBLIC -sENVIRONMENT=node -sNODERAWFS=1 -sSINGLE_FILE=1 -sALLOW_MEMORY_GROWTH=1
+    -sEXIT_RUNTIME=1 -sTOTAL_STACK=1MB)
+endif()
 foreach(room wave echo survey draw paper ui)
   file(GLOB sources CONFIGURE_DEPENDS ${CMAKE_SOURCE_DIR}/tests/${room}/*.cpp)
   if(NOT sources OR NOT TARGET gg_${room})

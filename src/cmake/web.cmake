@@ -1,5 +1,7 @@
 # The page: the program as WebAssembly, then what web/build.mjs makes of it (a hashed folder, and one self-contained file).
 # Physics keeps the -O3 of a Release build; what is drawn and written once a frame is built for size instead.
+# Emscripten's own scripts are written for Debian's node, which knows where Debian's JavaScript packages are; others are told.
+set_property(GLOBAL PROPERTY RULE_LAUNCH_LINK "${CMAKE_COMMAND} -E env NODE_PATH=/usr/share/nodejs")
 foreach(room draw paper ui imgui imgui_gl)
   if(TARGET gg_${room})
     target_compile_options(gg_${room} PRIVATE -Oz)

@@ -18,6 +18,8 @@ export function listenToPointers(surface, program, heard) {
 
     surface.addEventListener('pointerdown', (event) => {
         if (event.pointerType === 'mouse' && event.button !== 0) return;
+        event.preventDefault(); // no mouse events made up after a finger: they would take the focus from a field just opened
+        document.activeElement?.blur();
         surface.setPointerCapture(event.pointerId);
         down.set(event.pointerId, place(event));
         if (down.size === 1) {
@@ -48,9 +50,8 @@ export function listenToPointers(surface, program, heard) {
         if (!down.delete(event.pointerId)) return;
         const touch = isTouch(event);
         if (!pinching) {
-            const { x, y } = place(event);
-            if (event.type === 'pointercancel') program.leave(); // away first, so that the release hits nothing
-            program.button(event.type === 'pointercancel' ? -1e6 : x, event.type === 'pointercancel' ? -1e6 : y, 0, touch);
+            const { x, y } = event.type === 'pointercancel' ? { x: -1e6, y: -1e6 } : place(event); // let go where nothing is
+            program.button(x, y, 0, touch);
             if (touch) program.leave();
         } else if (down.size === 0) {
             pinching = false;
