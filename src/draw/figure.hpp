@@ -11,12 +11,12 @@
 namespace gg {
 
 struct FigureStyle {
-    Box box;                 ///< where to draw, css px
+    Box box;  ///< where to draw, css px
     bool dark = false;
     UnitSystem units = UnitSystem::metric;
-    double text = 14.0;      ///< css px of normal text in the picture; small text is 0.85 of it
-    bool handles = true;     ///< draw the drag handles (off in print)
-    std::string held;        ///< key of the handle being dragged now, drawn strong; empty: none
+    double text = 14.0;   ///< css px of normal text in the picture; small text is 0.85 of it
+    bool handles = true;  ///< draw the drag handles (off in print)
+    std::string held;     ///< key of the handle being dragged now, drawn strong; empty: none
 };
 
 /// Something on the picture that drags one number of the plan.
@@ -26,15 +26,25 @@ struct Handle {
     std::string name;   ///< "Depth to top", for screen readers and the hint
     Point at;           ///< centre of the grip, css px
     Way way = Way::down;
-    /// across / down: value = start + per_px * (pixels moved). round: value = angle of (pointer - pivot) clockwise from up.
+    /// across / down: value = start + per_px * (pixels moved). round: value = angle of (pointer - pivot) clockwise from
+    /// up.
     double start = 0.0, per_px = 0.0;
     Point pivot;
     double snap = 0.0;  ///< rounds dragged values to this, SI; 0: not
+    /// across / down: 1/value moves evenly instead (a frequency dragged by its wavelength); per_px is then the rate at
+    /// the start.
+    bool inverse = false;
+    double turn = 0.0;  ///< round: rad after which values repeat; 0: a whole turn
 };
+
+/// Value of a handle's field after the pointer went from `from` to `to`, css px; snapped, not yet held to the field's
+/// limits.
+double dragged(const Handle& handle, Point from, Point to);
 
 struct Figure {
     std::vector<Handle> handles;
-    std::string description;  ///< one or two sentences: what the picture shows, with its numbers; SVG <desc> and screen readers
+    std::string
+        description;  ///< one or two sentences: what the picture shows, with its numbers; SVG <desc> and screen readers
 };
 
 Figure beam_figure(Canvas& canvas, const Plan& plan, const Answers& answers, const FigureStyle& style);

@@ -7,14 +7,14 @@ namespace gg {
 
 struct Palette {
     bool dark = false;
-    Colour paper, panel, hairline;      ///< page, raised panel, rules
-    Colour ink, soft_ink;               ///< text, lesser text (still 7:1)
-    Colour wave;                        ///< the one accent: the wave, and what can be touched
-    Colour wave_soft;                   ///< a pale field of it
-    Colour second;                      ///< a second line in one picture (sent against returned)
-    Colour warn;                        ///< errors and gaps
-    Colour earth[8];                    ///< tints of layers, from the top
-    Colour earth_mark;                  ///< the texture's marks
+    Colour paper, panel, hairline;  ///< page, raised panel, rules
+    Colour ink, soft_ink;           ///< text, lesser text (still 7:1)
+    Colour wave;                    ///< the one accent: the wave, and what can be touched
+    Colour wave_soft;               ///< a pale field of it
+    Colour second;                  ///< a second line in one picture (sent against returned)
+    Colour warn;                    ///< errors and gaps
+    Colour earth[8];                ///< tints of layers, from the top
+    Colour earth_mark;              ///< the texture's marks
 };
 const Palette& palette(bool dark);
 

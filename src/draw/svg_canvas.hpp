@@ -9,7 +9,9 @@ namespace gg {
 /// Collects primitives; `finish()` gives a whole SVG document with role="img", <title> and <desc>.
 class SvgCanvas final : public Canvas {
   public:
-    SvgCanvas(double width, double height, std::string title, std::string description);
+    SvgCanvas(double width, double height, std::string title, std::string description = {});
+    /// The description, for a figure that knows its words only once drawn.
+    void describe(std::string description) { description_ = std::move(description); }
     void line(std::span<const Point> points, Stroke stroke, bool closed) override;
     void area(std::span<const Point> points, Colour fill) override;
     void box(Box box, Colour fill, double radius) override;
