@@ -6,6 +6,7 @@ namespace gg {
 
 std::vector<Complex> forward(std::span<const double> values) {
     if (values.empty()) return {};
+    if (values.size() == 1) return {values[0]};  // here and below: the library does not take a length of one
     Eigen::FFT<double> fft(Eigen::default_fft_impl<double>(), Eigen::FFT<double>::HalfSpectrum);
     std::vector<Complex> half(values.size() / 2 + 1);
     fft.fwd(half.data(), values.data(), static_cast<Eigen::Index>(values.size()));
@@ -14,6 +15,7 @@ std::vector<Complex> forward(std::span<const double> values) {
 
 std::vector<double> inverse(std::span<const Complex> half, std::size_t n) {
     if (n == 0 || half.size() != n / 2 + 1) return std::vector<double>(n, 0.0);
+    if (n == 1) return {half[0].real()};
     Eigen::FFT<double> fft(Eigen::default_fft_impl<double>(), Eigen::FFT<double>::HalfSpectrum);
     std::vector<double> values(n);
     fft.inv(values.data(), half.data(), static_cast<Eigen::Index>(n));
@@ -21,7 +23,7 @@ std::vector<double> inverse(std::span<const Complex> half, std::size_t n) {
 }
 
 std::vector<Complex> forward(std::span<const Complex> values) {
-    if (values.empty()) return {};
+    if (values.size() < 2) return {values.begin(), values.end()};
     Eigen::FFT<double> fft;
     std::vector<Complex> result(values.size());
     fft.fwd(result.data(), values.data(), static_cast<Eigen::Index>(values.size()));
@@ -29,7 +31,7 @@ std::vector<Complex> forward(std::span<const Complex> values) {
 }
 
 std::vector<Complex> inverse(std::span<const Complex> values) {
-    if (values.empty()) return {};
+    if (values.size() < 2) return {values.begin(), values.end()};
     Eigen::FFT<double> fft;
     std::vector<Complex> result(values.size());
     fft.inv(result.data(), values.data(), static_cast<Eigen::Index>(values.size()));
