@@ -1,7 +1,7 @@
 #pragma once
-/// The whole interactive program as a library: each platform is a thin shell that feeds it input and draws what it made.
-/// One Program owns one Dear ImGui context. No clock, files or threads in here: time and stored text come in as arguments,
-/// wishes go out as Requests.
+/// The whole interactive program as a library: each platform is a thin shell that feeds it input and draws what it
+/// made. One Program owns one Dear ImGui context. No clock, files or threads in here: time and stored text come in as
+/// arguments, wishes go out as Requests.
 #include <memory>
 #include <string>
 #include <string_view>
