@@ -60,7 +60,6 @@ Cut make_cut(const Plan& plan, const Answers& answers, const FigureStyle& style)
 void draw_ground(Beam& b) {
     const Cut& cut = b.cut;
     b.canvas.box({cut.plot.x, cut.plot.y, cut.plot.width, cut.surface - cut.plot.y}, b.colours.paper);
-    const double pitch = texture_pitch({0, 0, cut.plot.width, cut.plot.height});
     double top = 0.0;
     for (std::size_t i = 0; i < b.plan.ground.size() && i < 8; ++i) {
         const bool last = i + 1 == b.plan.ground.size();
@@ -70,8 +69,8 @@ void draw_ground(Beam& b) {
         const Box box{cut.plot.x, cut.at(0, top).y, cut.plot.width, (bottom - top) * cut.scale};
         if (!(box.height > 0)) break;
         b.canvas.box(box, b.colours.earth[i]);
-        draw_texture(b.canvas, box, cut.at(0, 0), pitch, texture_of(b.plan.ground[i].matter),
-                     b.colours.earth_mark.with_alpha(0.55));
+        draw_texture(b.canvas, box, cut.at(0, 0), texture_of(b.plan.ground[i].matter),
+                     b.colours.earth_mark.with_alpha(0.6));
         if (i > 0) b.canvas.line(points({Point{box.x, box.y}, Point{box.right(), box.y}}), {b.colours.earth_mark, 1.2});
         top = bottom;
     }
@@ -101,46 +100,6 @@ void draw_wave(Beam& b) {
     }
 }
 
-void draw_round_target(Beam& b, Point centre, double radius) {
-    const Filling filling = b.plan.target.filling;
-    const Colour ink = b.colours.ink;
-    const double wall = std::max(1.4, 0.13 * radius);
-    switch (filling) {
-        case Filling::metal:
-            b.canvas.disc(centre, radius, ink);
-            return;
-        case Filling::plastic_water:
-        case Filling::water:
-            b.canvas.disc(centre, radius, b.colours.wave_soft);
-            break;
-        case Filling::plastic_air:
-        case Filling::air:
-            b.canvas.disc(centre, radius, b.colours.paper);
-            break;
-        case Filling::concrete:
-            b.canvas.disc(centre, radius, b.colours.hairline);
-            break;
-        case Filling::own:
-            b.canvas.disc(centre, radius, b.colours.panel);
-            break;
-    }
-    if ((filling == Filling::plastic_water || filling == Filling::water) && radius > 5) {
-        for (int row = -1; row <= 1; ++row) {
-            const double y = centre.y + 0.45 * radius * row,
-                         half = 0.62 * std::sqrt(std::max(0.0, radius * radius - (y - centre.y) * (y - centre.y)));
-            std::array<Point, 13> wave;
-            for (std::size_t i = 0; i < wave.size(); ++i) {
-                const double t = static_cast<double>(i) / 12.0;
-                wave[i] = {centre.x + half * (2 * t - 1), y + 0.08 * radius * std::sin(6.2832 * 1.5 * t)};
-            }
-            b.canvas.line(wave, {b.colours.wave, std::clamp(0.06 * radius, 1.0, 2.0)});
-        }
-    }
-    const bool dashed = filling == Filling::air || filling == Filling::water;  // no wall: the ground itself is the edge
-    b.canvas.ring(centre, std::max(0.8, radius - wall / 2),
-                  {ink, dashed ? 1.4 : wall, dashed ? 3.0 : 0.0, dashed ? 2.0 : 0.0});
-}
-
 /// x of each target, m: one under the antenna, the others beside it.
 std::vector<double> places(const Beam& b) {
     std::vector<double> out;
@@ -153,17 +112,24 @@ void draw_targets(Beam& b) {
     const double r = 0.5 * b.size * b.cut.scale;
     if (b.flat()) {
         const Box box{b.cut.plot.x, b.cut.at(0, b.depth).y, b.cut.plot.width, std::max(2.0, 2 * r)};
-        const bool dark = b.plan.target.filling == Filling::metal;
-        b.canvas.box(box, dark                                    ? b.colours.ink
-                          : b.plan.target.filling == Filling::air ? b.colours.paper
-                                                                  : b.colours.wave_soft);
+        const Filling filling = b.plan.target.filling;
+        const bool water = filling == Filling::water || filling == Filling::plastic_water;
+        const bool air = filling == Filling::air || filling == Filling::plastic_air;
+        b.canvas.box(box, filling == Filling::metal ? b.colours.ink
+                          : water                   ? b.colours.wave_soft
+                          : air                     ? b.colours.paper
+                                                    : b.colours.hairline);
+        if (water || filling == Filling::concrete) {
+            draw_texture(b.canvas, box, b.cut.at(0, b.depth), water ? Texture::waves : Texture::triangles,
+                         b.colours.earth_mark);
+        }
         for (const double y : {box.y, box.bottom()})
-            b.canvas.line(points({Point{box.x, y}, Point{box.right(), y}}), {b.colours.ink, 1.4});
+            b.canvas.line(points({{box.x, y}, {box.right(), y}}), {b.colours.ink, 1.4});
         return;
     }
     for (const double x : places(b)) {
         const Point centre = b.cut.at(x, b.depth + 0.5 * b.size);
-        draw_round_target(b, centre, std::max(3.0, r));
+        draw_round(b.canvas, b.colours, centre, std::max(3.0, r), b.plan.target.filling);
         b.labels.keep_round(centre, std::max(3.0, r));
     }
 }
@@ -178,11 +144,13 @@ void draw_antenna(Beam& b) {
     for (const double x : {left, right})
         b.canvas.box({x - foot, foot_y - 0.55 * unit, 2 * foot, 0.55 * unit}, b.colours.wave, 2);
     b.labels.keep({body.x, body.y, body.width, foot_y - body.y});
-    if (b.plan.antenna.height > 0 && b.plan.antenna.height * b.cut.scale > 3) {
-        draw_dimension(b.canvas, {body.right() + 12, foot_y}, {body.right() + 12, b.cut.surface},
-                       {b.colours.soft_ink, 1});
-        b.labels.put({{body.right() + 20, 0.5 * (foot_y + b.cut.surface)}}, b.length(b.plan.antenna.height) + " up",
-                     {b.colours.soft_ink, 0.85 * unit, Across::left, Down::middle});
+    if (b.plan.antenna.height > 0) {
+        if (b.plan.antenna.height * b.cut.scale > 3) {
+            draw_dimension(b.canvas, {body.right() + 12, foot_y}, {body.right() + 12, b.cut.surface},
+                           {b.colours.soft_ink, 1});
+        }
+        b.labels.put({{body.right() + 20, body.y + 0.5 * body.height}}, b.length(b.plan.antenna.height) + " up",
+                     {b.colours.soft_ink, 0.85 * unit, Across::left, Down::middle}, false);
     }
     const std::string words = say(b.plan.antenna.pulse.centre_frequency, Quantity::frequency, b.style.units);
     b.labels.put({{body.x - 8, body.y + body.height / 2}, {body.right() + 10, body.y + body.height / 2}}, words,
@@ -237,9 +205,11 @@ void draw_patch(Beam& b) {
     const double half = b.answers.beam.patch_along;
     if (!(half > 0)) return;
     const Point left = b.cut.at(-half, b.depth), right = b.cut.at(half, b.depth);
+    b.canvas.push_clip(b.cut.plot);
     b.canvas.line(points({left, right}), {b.colours.wave, 3.5});
     for (const Point& p : {left, right})
         b.canvas.line(points({Point{p.x, p.y - 6}, Point{p.x, p.y + 6}}), {b.colours.wave, 2});
+    b.canvas.pop_clip();
     const TextStyle words{b.colours.wave, b.style.text, Across::left, Down::bottom, true};
     const double lift = 7, start = b.cut.middle + 8;
     b.labels.put({{start, left.y - lift}, {start, left.y - lift - 1.4 * b.style.text}, {left.x, left.y - lift}},
@@ -253,16 +223,14 @@ void add_target_handles(Beam& b) {
     b.figure.handles.push_back(
         {"target.depth", "Depth to top", on_axis, Handle::Way::down, b.depth, metre, {}, 0.01, false, 0.0});
     const double left = cut.middle - std::max(0.0, b.answers.beam.patch_along) * cut.scale;
-    if (left > on_axis.x + 20) {
+    if (b.style.handles && left > on_axis.x + 20) {
         b.canvas.line(points({Point{on_axis.x, top}, Point{left, top}}), {b.colours.wave, 1.2, 3, 4});
     }
     b.labels.keep_round(on_axis, grip_radius + 2);
-    b.labels.put({{on_axis.x + grip_radius + 5, top - 4}, {on_axis.x + grip_radius + 5, top + 1.4 * b.style.text}},
-                 b.length(b.depth), {b.colours.wave, b.style.text, Across::left, Down::bottom, true});
 
     const double bottom = cut.at(0, b.depth + b.size).y, reach = 22;
     const Point size_grip = inside({cut.middle, bottom + reach}, cut.plot, grip_radius + 3);
-    b.canvas.line(points({Point{cut.middle, bottom}, size_grip}), {b.colours.wave, 1.4});
+    if (b.style.handles) b.canvas.line(points({Point{cut.middle, bottom}, size_grip}), {b.colours.wave, 1.4});
     b.figure.handles.push_back(
         {"target.size", "Size", size_grip, Handle::Way::down, b.size, metre, {}, 0.001, false, 0.0});
     b.labels.keep_round(size_grip, grip_radius + 2);
@@ -270,7 +238,7 @@ void add_target_handles(Beam& b) {
         const double x = cut.at(b.plan.target.gap, 0).x;
         const double drop = std::abs(x - size_grip.x) < 2 * grip_radius + 6 ? reach + 2 * grip_radius + 6 : reach;
         const Point grip = inside({x, bottom + drop}, cut.plot, grip_radius + 3);
-        b.canvas.line(points({Point{x, bottom}, grip}), {b.colours.wave, 1.4});
+        if (b.style.handles) b.canvas.line(points({Point{x, bottom}, grip}), {b.colours.wave, 1.4});
         b.figure.handles.push_back({"target.gap",
                                     "Gap, centre to centre",
                                     grip,
@@ -283,6 +251,13 @@ void add_target_handles(Beam& b) {
                                     0.0});
         b.labels.keep_round(grip, grip_radius + 2);
     }
+}
+
+void label_depth(Beam& b) {
+    const Point grip = b.figure.handles.front().at;  // the depth's own, added first
+    const double x = grip.x + grip_radius + 8;
+    b.labels.put({{x, grip.y - 5}, {x, grip.y + 5 + 1.25 * b.style.text}}, b.length(b.depth),
+                 {b.colours.wave, b.style.text, Across::left, Down::bottom, true});
 }
 
 void add_boundary_handles(Beam& b) {
@@ -364,12 +339,13 @@ Figure beam_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     draw_ground(b);
     draw_wave(b);
     draw_targets(b);
-    draw_patch(b);
     canvas.pop_clip();
     draw_antenna(b);
     add_target_handles(b);
-    draw_wavelength(b);
     add_boundary_handles(b);
+    draw_wavelength(b);
+    draw_patch(b);
+    label_depth(b);
     draw_scale_bar(canvas, b.labels, {cut.plot.x + 12, cut.plot.bottom() - 12}, std::min(140.0, 0.3 * cut.plot.width),
                    cut.scale, colours, style);
     const double words_y = cut.at(0, plan.target.depth.likely + plan.target.size).y + 44;

@@ -47,13 +47,14 @@ void draw_lines(Site& s) {
     const std::size_t every = std::max<std::size_t>(
         {1, lines.size() / 300,
          static_cast<std::size_t>(std::min(1e6, 3.0 / std::max(1e-6, s.plan.lanes.spacing * s.map.scale)))});
+    const double fade = std::clamp(s.plan.lanes.spacing * s.map.scale / 14, 0.25, 0.75);
     std::size_t arrows = 0;
     const std::size_t arrow_every =
         std::max<std::size_t>(1, static_cast<std::size_t>(12.0 / std::max(0.1, s.plan.lanes.spacing * s.map.scale)));
     for (std::size_t i = 0; i < lines.size(); i += every) {
         const Point a = s.map.at(lines[i].from), b = s.map.at(lines[i].to);
         const Colour ink = lines[i].second_way ? s.colours.second : s.colours.soft_ink;
-        s.canvas.line(points({a, b}), {ink.with_alpha(0.75), 1.2});
+        s.canvas.line(points({a, b}), {ink.with_alpha(fade), 1.2});
         if (i % arrow_every != 0 || ++arrows > 120) continue;
         const Point tip{a.x + 0.58 * (b.x - a.x), a.y + 0.58 * (b.y - a.y)};
         draw_arrowhead(s.canvas, tip, {b.x - a.x, b.y - a.y}, 8, ink);
@@ -72,10 +73,13 @@ void draw_target(Site& s) {
         s.canvas.line(points({c, d}), {s.colours.warn, 3, 6, 5});
     }
     const std::size_t every = std::max<std::size_t>(1, lanes.hits.size() / 300);
+    // Smaller where they stand close, so that each is still one mark.
+    const double apart =
+        lanes.hits.size() > 1 ? std::hypot(b.x - a.x, b.y - a.y) / static_cast<double>(lanes.hits.size()) : 100.0;
+    const double r = std::clamp(0.4 * apart * static_cast<double>(every), 1.6, 5.5);
     for (std::size_t i = 0; i < lanes.hits.size(); i += every) {
         // A filled square on its tip: no other mark here has that form.
         const Point c = s.map.at(lanes.hits[i]);
-        const double r = 5.5;
         s.canvas.area(
             points({Point{c.x, c.y - r - 1.5}, {c.x + r + 1.5, c.y}, {c.x, c.y + r + 1.5}, {c.x - r - 1.5, c.y}}),
             s.colours.paper);
@@ -106,11 +110,16 @@ void add_spacing_handle(Site& s) {
     if (lines.empty() || !(spacing > 0)) return;
     double n = 1;
     while (n * spacing * s.map.scale < 40 && n < 1e4) n *= 2;
-    const Point from = s.map.at(lines.front().from), end = s.map.at(lines.front().to);
+    const auto size_of = [&](std::size_t i) {
+        return s.map.scale * std::hypot(lines[i].to.x - lines[i].from.x, lines[i].to.y - lines[i].from.y);
+    };
+    // The first line, which stays where it is while the spacing changes, unless a corner of the site cuts it short.
+    const std::size_t base = size_of(0) < 60 ? lines.size() / 4 : 0;
+    const Point from = s.map.at(lines[base].from), end = s.map.at(lines[base].to);
     const double bearing = s.plan.lanes.bearing;
     double nx = std::cos(bearing), ny = std::sin(bearing);  // right of the direction of travel, on the screen
-    if (lines.size() > 1) {
-        const Point next = s.map.at(lines[1].from);
+    if (lines.size() > base + 1) {
+        const Point next = s.map.at(lines[base + 1].from);
         if ((next.x - from.x) * nx + (next.y - from.y) * ny < 0) nx = -nx, ny = -ny;
     }
     const double t = 0.24, length = n * spacing * s.map.scale;
@@ -146,6 +155,21 @@ void draw_north(Site& s) {
     s.labels.keep({c.x - r - 4, c.y - 2.4 * r, 2 * r + 8, 3.6 * r});
 }
 
+void draw_legend(Site& s) {
+    const double y = s.style.box.bottom() - 10 - 0.5 * s.small();
+    const TextStyle words{s.colours.ink, s.small(), Across::left, Down::middle};
+    double x = s.style.box.right() - 10;
+    if (!s.answers.lanes.gaps.empty()) {
+        x -= s.canvas.measure("not seen", words);
+        s.canvas.text({x, y}, "not seen", words);
+        s.canvas.line(points({{x - 28, y}, {x - 7, y}}), {s.colours.warn, 3, 6, 5});
+        x -= 44;
+    }
+    x -= s.canvas.measure("hit", words);
+    s.canvas.text({x, y}, "hit", words);
+    s.canvas.area(points({{x - 12, y - 5.5}, {x - 6.5, y}, {x - 12, y + 5.5}, {x - 17.5, y}}), s.colours.ink);
+}
+
 std::string sentence_of(const Site& s) {
     const std::size_t hits = s.answers.lanes.hits.size();
     std::string words = std::to_string(s.answers.lanes.lines.size()) + " lines, " + std::to_string(hits) +
@@ -176,6 +200,7 @@ Figure lanes_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     draw_north(s);
     s.labels.put({{style.box.x + 10, style.box.y + 0.55 * head}}, sentence_of(s),
                  {colours.ink, style.text, Across::left, Down::middle, true}, false);
+    draw_legend(s);
     add_bearing_handle(s);
     add_spacing_handle(s);
     draw_scale_bar(canvas, s.labels, {style.box.x + 12, style.box.bottom() - 10}, std::min(140.0, 0.4 * s.plot.width),

@@ -3,6 +3,8 @@
 #include <cmath>
 
 #include "draw/parts.hpp"
+#include "draw/textures.hpp"
+#include "wave/layers.hpp"
 
 namespace gg {
 namespace {
@@ -88,6 +90,34 @@ void draw_panel(Pair& p) {
     p.canvas.pop_clip();
 }
 
+/// From a quarter or half of the latest arrival where nothing comes earlier, so that the curves fill the panel; in
+/// round numbers, so that it stands still while the depth is dragged a little.
+void show_times(Pair& p, double apex) {
+    const double width = answer_or(p.answers, "target.width", 0.0);
+    double latest = apex;
+    for (const double t : {p.answers.pair.arrival_left.empty() ? 0.0 : p.answers.pair.arrival_left.front(),
+                           p.answers.pair.arrival_right.empty() ? 0.0 : p.answers.pair.arrival_right.front()}) {
+        if (std::isfinite(t)) latest = std::max(latest, t);
+    }
+    p.last = nice_ceiling(std::max({1.1 * latest, apex + 1.5 * width, 1e-10}) * 1e9) * 1e-9;
+    for (const double share : {0.5, 0.25}) {
+        if (p.first == 0.0 && share * p.last < apex - 1.2 * width) p.first = share * p.last;
+    }
+}
+
+/// How strong the picture is along the line, as shades: what an office sees of one row of the section.
+void draw_shades(Pair& p, Box box) {
+    const std::vector<double>& response = p.answers.pair.response;
+    const std::size_t n = std::min<std::size_t>(response.size(), 4096);
+    if (n < 2) return;
+    std::vector<Colour> shades;
+    for (std::size_t i = 0; i < n; ++i) {
+        const double strong = std::isfinite(response[i]) ? std::clamp(response[i], 0.0, 1.0) : 0.0;
+        shades.push_back(p.colours.wave.with_alpha(0.04 + 0.96 * strong));
+    }
+    p.canvas.image(box, static_cast<int>(n), 1, shades);
+}
+
 void draw_time_axis(Pair& p) {
     const double x = p.panel.x;
     const TextStyle words{p.colours.soft_ink, p.small(), Across::right, Down::middle};
@@ -104,13 +134,19 @@ void draw_time_axis(Pair& p) {
 void draw_ground(Pair& p) {
     const double r = std::clamp(0.5 * p.plan.target.size * p.scale(), 2.0, 0.5 * p.ground.height - 4);
     const double y = p.ground.y + 0.5 * p.ground.height;
-    p.canvas.box(p.ground, p.colours.earth[0], 4);
+    const int layer =
+        p.plan.ground.empty() ? 0 : std::clamp(layer_at(likely_stack(p.plan), p.plan.target.depth.likely), 0, 7);
+    p.canvas.box(p.ground, p.colours.earth[layer]);
+    if (layer < static_cast<int>(p.plan.ground.size())) {
+        draw_texture(p.canvas, p.ground, {p.panel.x, p.ground.y},
+                     texture_of(p.plan.ground[static_cast<std::size_t>(layer)].matter),
+                     p.colours.earth_mark.with_alpha(0.6));
+    }
     const double left = p.x(p.answers.pair.first), right = p.x(p.answers.pair.first + p.plan.target.gap);
     for (const double x : {left, right}) {
         p.canvas.line(points({Point{x, p.panel.y}, Point{x, p.ground.bottom()}}),
                       {p.colours.soft_ink.with_alpha(0.5), 1, 3, 4});
-        p.canvas.disc({x, y}, r, p.colours.wave_soft);
-        p.canvas.ring({x, y}, r, {p.colours.ink, 1.6});
+        draw_round(p.canvas, p.colours, {x, y}, r, p.plan.target.filling);
         p.labels.keep_round({x, y}, r);
     }
     draw_dimension(p.canvas, {left, y}, {right, y}, {p.colours.wave, 1.6});
@@ -140,7 +176,7 @@ void add_depth_handle(Pair& p) {
     p.figure.handles.push_back(
         {"target.depth", "Depth to top", grip, Handle::Way::down, depth, per_px, {}, 0.01, false, 0.0});
     p.labels.keep_round(grip, grip_radius + 2);
-    p.labels.put({{grip.x + grip_radius + 5, grip.y - 3}}, say(depth, Quantity::length, p.style.units) + " deep",
+    p.labels.put({{grip.x + grip_radius + 8, grip.y - 3}}, say(depth, Quantity::length, p.style.units) + " deep",
                  {p.colours.wave, p.small(), Across::left, Down::bottom, true});
 }
 
@@ -158,17 +194,34 @@ std::string verdict_words(PairPicture::Verdict verdict) {
 
 std::string sentence_of(const Pair& p) {
     const std::string gap = say(p.plan.target.gap, Quantity::length, p.style.units);
-    const double least = answer_or(p.answers, "apart.sideways", 0.0);
-    const std::string from = least > 0 ? " They part from " + say(least, Quantity::length, p.style.units) + "." : "";
     switch (p.answers.pair.verdict) {
         case PairPicture::Verdict::apart:
-            return "Two at " + gap + " show as two." + from;
+            return "Two at " + gap + " show as two.";
         case PairPicture::Verdict::merging:
-            return "Two at " + gap + " run together." + from;
+            return "Two at " + gap + " run together.";
         case PairPicture::Verdict::one:
-            return "Two at " + gap + " look like one." + from;
+            return "Two at " + gap + " look like one.";
     }
     return {};
+}
+
+std::string least_words(const Pair& p) {
+    const double least = answer_or(p.answers, "apart.sideways", 0.0);
+    return least > 0 ? "They part from " + say(least, Quantity::length, p.style.units) + "." : std::string();
+}
+
+/// The verdict large, the sentences beside it: in one row, or in two where the picture is narrow.
+void draw_verdict(Pair& p, double height) {
+    const TextStyle strong{p.colours.ink, 1.4 * p.style.text, Across::left, Down::middle, true};
+    const std::string verdict = verdict_words(p.answers.pair.verdict), first = sentence_of(p), second = least_words(p);
+    const double x = p.style.box.x + 10, y = p.style.box.y + 0.5 * height;
+    p.canvas.text({x, y}, verdict, strong);
+    const double after = x + p.canvas.measure(verdict, strong) + 14;
+    const TextStyle row{p.colours.ink, p.style.text, Across::left, Down::middle};
+    if (p.labels.put({{after, y}}, first + " " + second, row, false)) return;
+    const TextStyle low{p.colours.ink, p.small(), Across::left, Down::middle};
+    p.labels.put({{after, y - 0.62 * p.small()}}, first, low, false);
+    p.labels.put({{after, y + 0.64 * p.small()}}, second, low, false);
 }
 
 }  // namespace
@@ -181,33 +234,29 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     Pair p{canvas, plan, answers, style, colours, Labels(canvas, colours, style.box), {}, {}, {},
            0.0,    1.0,  0.0,     1.0,   {}};
     const Box& box = style.box;
-    const double gutter = 3.4 * style.text, pad = 10, head = 1.9 * style.text;
+    const double shade = 10, gutter = 3.4 * style.text, pad = 10, head = 2.5 * style.text;
     const double width = box.width - gutter - pad, strip = std::clamp(0.16 * box.height, 34.0, 90.0),
                  hill = std::clamp(0.18 * box.height, 30.0, 130.0);
     p.curve = {box.x + gutter, box.y + head, width, hill};
-    p.panel = {box.x + gutter, p.curve.bottom() + 6, width, box.height - head - hill - strip - 18};
+    p.panel = {box.x + gutter, p.curve.bottom() + shade + 8, width, box.height - head - hill - strip - shade - 20};
     p.ground = {box.x + gutter, p.panel.bottom() + 6, width, strip};
     p.from = pair.positions.front();
     p.to = pair.positions.back();
     const double apex = std::min(least_of(pair.arrival_left), least_of(pair.arrival_right));
-    p.last = nice_ceiling(1.5 * std::max(apex, 1e-10) * 1e9) * 1e-9;
+    show_times(p, apex);
     if (!(width > 8 && p.panel.height > 8)) return {{}, "No room to draw."};
 
     canvas.push_clip(box);
     canvas.box(box, colours.paper);
-    const TextStyle strong{colours.ink, 1.2 * style.text, Across::left, Down::middle, true};
-    const std::string verdict = verdict_words(pair.verdict), sentence = sentence_of(p);
-    canvas.text({box.x + pad, box.y + 0.55 * head}, verdict, strong);
-    const double after = box.x + pad + canvas.measure(verdict, strong) + 12;
-    p.labels.put({{after, box.y + 0.55 * head}}, sentence, {colours.soft_ink, style.text, Across::left, Down::middle},
-                 false);
+    draw_verdict(p, head);
     draw_strength(p);
+    draw_shades(p, {p.curve.x, p.curve.bottom() + 3, p.curve.width, shade});
     draw_panel(p);
     draw_ground(p);
     add_depth_handle(p);
     draw_time_axis(p);
     p.figure.description = "Two neighbours " + say(plan.target.depth.likely, Quantity::length, style.units) +
-                           " deep: " + verdict + ". " + sentence;
+                           " deep: " + verdict_words(pair.verdict) + ". " + sentence_of(p) + " " + least_words(p);
     draw_grips(canvas, colours, p.figure, style);
     canvas.pop_clip();
     return p.figure;

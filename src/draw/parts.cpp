@@ -122,8 +122,7 @@ void draw_scale_bar(Canvas& canvas, Labels& labels, Point at, double most, doubl
     canvas.box({plate.x, at.y - 7, plate.width, 11}, colours.paper.with_alpha(0.82), 3);
     canvas.box({at.x, at.y - 4, width / 2, 5}, colours.ink);
     canvas.box({at.x + width / 2, at.y - 4, width / 2, 5}, colours.paper);
-    const std::array<Point, 4> edge{
-        Point{at.x, at.y - 4}, {at.x + width, at.y - 4}, {at.x + width, at.y + 1}, {at.x, at.y + 1}};
+    const auto edge = points({{at.x, at.y - 4}, {at.x + width, at.y - 4}, {at.x + width, at.y + 1}, {at.x, at.y + 1}});
     canvas.line(edge, {colours.ink, 1}, true);
     labels.keep(plate);
 }
@@ -155,6 +154,45 @@ double answer_or(const Answers& answers, std::string_view key, double otherwise)
         std::find_if(answers.list.begin(), answers.list.end(), [&](const Answer& a) { return a.key == key; });
     return found != answers.list.end() && found->likely.ok() && std::isfinite(found->likely.value) ? found->likely.value
                                                                                                    : otherwise;
+}
+
+void draw_round(Canvas& canvas, const Palette& colours, Point centre, double radius, Filling filling) {
+    const double wall = std::max(1.4, 0.13 * radius);
+    switch (filling) {
+        case Filling::metal:
+            canvas.disc(centre, radius, colours.ink);
+            return;
+        case Filling::plastic_water:
+        case Filling::water:
+            canvas.disc(centre, radius, colours.wave_soft);
+            break;
+        case Filling::plastic_air:
+        case Filling::air:
+            canvas.disc(centre, radius, colours.paper);
+            break;
+        case Filling::concrete:
+            canvas.disc(centre, radius, colours.hairline);
+            break;
+        case Filling::own:
+            canvas.disc(centre, radius, colours.panel);
+            break;
+    }
+    if ((filling == Filling::plastic_water || filling == Filling::water) && radius > 5) {
+        for (int row = -1; row <= 1; ++row) {
+            const double rise = 0.45 * row, half = 0.62 * radius * std::sqrt(1 - rise * rise);
+            std::array<Point, 13> wave;
+            for (std::size_t i = 0; i < wave.size(); ++i) {
+                const double t = static_cast<double>(i) / 12.0;
+                wave[i] = {centre.x + half * (2 * t - 1),
+                           centre.y + radius * (rise + 0.08 * std::sin(6.2832 * 1.5 * t))};
+            }
+            canvas.line(wave, {colours.wave, std::clamp(0.06 * radius, 1.0, 2.0)});
+        }
+    }
+    // Without a wall the ground itself is the edge.
+    const bool bare = filling == Filling::air || filling == Filling::water;
+    const Stroke edge = bare ? Stroke{colours.ink, 1.6, 4, 3} : Stroke{colours.ink, wall};
+    canvas.ring(centre, std::max(0.8, radius - edge.width / 2), edge);
 }
 
 std::string material_name(const Matter& matter) {

@@ -75,6 +75,8 @@ TextStyle small_text(const FigureStyle& style, const Palette& colours);
 
 /// Likely value of an answer, or `otherwise` where there is none that may be shown.
 double answer_or(const Answers& answers, std::string_view key, double otherwise);
+/// A round target as it is filled: solid metal, a pipe's wall with water or air in it, a bare void.
+void draw_round(Canvas& canvas, const Palette& colours, Point centre, double radius, Filling filling);
 /// Name and texture of a layer's material.
 std::string material_name(const Matter& matter);
 Texture texture_of(const Matter& matter);

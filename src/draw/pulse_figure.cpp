@@ -200,19 +200,30 @@ void draw_overview(Pulse& p) {
                                 false,
                                 0.0});
     p.labels.keep_round(grip, grip_radius + 2);
-    std::string words = "window " + nanoseconds(p.plan.pass.window, p.style.units);
-    if (pulse.window_depth > 0) words += ", to " + say(pulse.window_depth, Quantity::length, p.style.units);
-    p.labels.put(
-        {{grip.x - grip_radius - 8, box.y + 3}, {grip.x - grip_radius - 8, box.bottom() - 4 - 1.25 * p.small()}}, words,
-        {p.colours.wave, p.small(), Across::right, Down::top, true});
+    // The words leave the pulse free.
+    p.labels.keep({a, box.y, z - a, box.height});
+    const std::string time = nanoseconds(p.plan.pass.window, p.style.units);
+    const std::string depth =
+        pulse.window_depth > 0 ? ", to " + say(pulse.window_depth, Quantity::length, p.style.units) : "";
+    const TextStyle right{p.colours.wave, p.small(), Across::right, Down::middle, true};
+    TextStyle left = right;
+    left.across = Across::left;
+    const double before = grip.x - grip_radius - 9, after = grip.x + grip_radius + 9;
+    for (const std::string& words : {"window " + time + depth, time + depth, time}) {
+        if (p.labels.put({{before, grip.y}}, words, right) ||
+            p.labels.put({{after, grip.y}, {box.x + 6, grip.y}}, words, left))
+            break;
+    }
 }
 
-/// The sent wavelet, at the same time scale as the large picture.
+/// The wavelet as it was sent, small.
 void draw_sent(Pulse& p, Box box) {
     const Signal& sent = p.answers.pulse.sent;
     if (!usable(sent) || box.height < 16) return;
-    const double half = 0.5 * box.width / p.zoom.px_per_second();
-    const Axis axis{-half, half, box, 0.46};
+    const Stretch part = busy(sent);
+    const double half = 0.62 * (part.to - part.from), middle = 0.5 * (part.from + part.to);
+    if (!(half > 0)) return;
+    const Axis axis{middle - half, middle + half, box, 0.46};
     p.canvas.push_clip(box);
     p.canvas.line(curve(axis, sent, sent.values), {p.colours.soft_ink, 1.8});
     p.canvas.pop_clip();
@@ -286,7 +297,7 @@ Figure pulse_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     canvas.box(box, colours.paper);
     const double sent_width = std::min(0.34 * inner.width, 220.0);
     draw_sent(p, {inner.x, inner.y, sent_width, head});
-    canvas.text({inner.x, inner.y}, "sent", {colours.soft_ink, small, Across::left, Down::top});
+    canvas.text({inner.x, inner.y + head}, "sent", {colours.soft_ink, small, Across::left, Down::bottom});
     draw_legend(p, {inner.x + sent_width + 14, inner.y, inner.width - sent_width - 14, head});
     draw_zoom(p);
     draw_interval(p);

@@ -30,7 +30,7 @@ void mark(const Pen& pen, Texture texture, Point p, Point random, int column, in
     const Point at{p.x + (0.15 + 0.7 * random.x) * u, p.y + (0.15 + 0.7 * random.y) * u};
     switch (texture) {
         case Texture::dots:
-            pen.canvas.disc(at, 0.9 + 0.6 * random.x, pen.colour);
+            pen.canvas.disc(at, u * (0.05 + 0.035 * random.x), pen.colour);
             break;
         case Texture::coarse_dots: {
             const double r = u * (0.08 + 0.13 * random.y);
@@ -89,29 +89,28 @@ void mark(const Pen& pen, Texture texture, Point p, Point random, int column, in
     }
 }
 
-int primitives_a_mark(Texture texture) { return texture == Texture::flakes ? 3 : texture == Texture::crosses ? 2 : 1; }
+/// Primitives that a cell costs at most.
+int cost(Texture texture) { return texture == Texture::flakes ? 3 : texture == Texture::crosses ? 2 : 1; }
+
+double cell_size(Box box, Texture texture) {
+    const int most = most_texture_marks / cost(texture);
+    double u = texture == Texture::dots ? 12.0 : 17.0;
+    // Whole cells, and one beyond each edge: that many are walked.
+    while (u < 1e5 && (box.width / u + 3) * (box.height / u + 2) > most) u *= 1.3;
+    return u;
+}
 
 }  // namespace
 
-double texture_pitch(Box picture) {
-    const double need = std::sqrt(std::max(0.0, picture.width * picture.height) / (0.7 * most_texture_marks));
-    double pitch = 17.0;
-    while (pitch < need) pitch *= 1.25;
-    return pitch;
-}
-
-void draw_texture(Canvas& canvas, Box box, Point anchor, double pitch, Texture texture, Colour marks) {
-    if (texture == Texture::plain || !(box.width > 0 && box.height > 0 && pitch >= 4 && pitch < 1e6)) return;
-    // Fine sand is denser than gravel, at the same budget: three of its small dots a cell would be, so its cells shrink
-    // instead.
-    const double u = texture == Texture::dots ? 0.85 * pitch : pitch;
+void draw_texture(Canvas& canvas, Box box, Point anchor, Texture texture, Colour marks) {
+    if (texture == Texture::plain || !(box.width > 0 && box.height > 0)) return;
+    const double u = cell_size(box, texture);
     const double first_column = std::floor((box.x - anchor.x) / u) - 1, first_row = std::floor((box.y - anchor.y) / u);
     if (!(std::abs(first_column) < 1e6 && std::abs(first_row) < 1e6)) return;
     const Pen pen{canvas, marks, u};
     canvas.push_clip(box);
-    int left = most_texture_marks / primitives_a_mark(texture);
-    for (double row = first_row; anchor.y + row * u < box.bottom() && left > 0; ++row) {
-        for (double column = first_column; anchor.x + column * u < box.right() && left > 0; ++column, --left) {
+    for (double row = first_row; anchor.y + row * u < box.bottom(); ++row) {
+        for (double column = first_column; anchor.x + column * u < box.right(); ++column) {
             const int i = static_cast<int>(column), j = static_cast<int>(row);
             mark(pen, texture, {anchor.x + column * u, anchor.y + row * u}, scatter(i, j), i, j);
         }

@@ -5,15 +5,11 @@
 
 namespace gg {
 
-/// Fills `box` with marks that stand still in the ground: cells of `pitch` css px counted from `anchor`, the screen
-/// place of one point of the ground. The same ground gives the same marks. At most `most_texture_marks` primitives,
-/// then it stops.
-void draw_texture(Canvas& canvas, Box box, Point anchor, double pitch, Texture texture, Colour marks);
+constexpr int most_texture_marks = 400;  ///< primitives a layer
 
-/// Pitch that keeps a picture of that area within the number of marks, in few fixed sizes so that marks do not crawl
-/// while a boundary is dragged.
-double texture_pitch(Box picture);
-
-constexpr int most_texture_marks = 400;
+/// Fills `box` with marks that stand still in the ground: cells counted from `anchor`, the screen place of one point of
+/// the ground. The same ground gives the same marks. Cells come in few fixed sizes, chosen by the box's area to keep
+/// within `most_texture_marks`, so that marks do not crawl while a boundary is dragged.
+void draw_texture(Canvas& canvas, Box box, Point anchor, Texture texture, Colour marks);
 
 }  // namespace gg
