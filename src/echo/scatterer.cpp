@@ -11,7 +11,7 @@ namespace {
 /// How steep the inner field is at a radius: slope over field (or field over slope when `inverted`), times the
 /// impedance weight k (along) or k / permittivity (across). One of the two stays finite for each kind of wall.
 struct Steepness {
-    Complex slope, field;  ///< weighted slope and field, up to a common factor
+    Complex slope, field;
 };
 
 Complex weight(const Inner& inner, Polarisation polarisation) {
@@ -28,8 +28,9 @@ Complex share(const CylinderFunctions& f, int n, Complex w, const Steepness& inn
     return h == Complex{} ? Complex{} : -(w * f.j_slope(n) * inner.field - f.j[n] * inner.slope) / h;
 }
 
-/// The radii's functions, once for all orders. Arguments past the range are those of something as good as metal.
-constexpr double farthest = 300.0;
+/// Loss (Np over the radius) past which nothing comes back from the far side: the inner field's slope is then that of a
+/// plane wave going in, J_n'(z)/J_n(z) = j.
+constexpr double opaque = 200.0;
 
 }  // namespace
 
@@ -38,14 +39,18 @@ std::vector<Complex> scatter(const Cylinder& cylinder, const Inner& host, int or
     std::vector<Steepness> wall(count, metal(polarisation));
     const double inner_radius = cylinder.radius - cylinder.wall;
     const Inner& inside = cylinder.inside;
-    if (!inside.metal && std::abs(inside.k) * inner_radius < farthest) {
+    if (!inside.metal && -inside.k.imag() * inner_radius > opaque) {
+        std::fill(wall.begin(), wall.end(), Steepness{weight(inside, polarisation) * Complex{0.0, 1.0}, 1.0});
+    } else if (!inside.metal) {
         const CylinderFunctions f = cylinder_functions(inside.k * inner_radius, order);
         for (int n = 0; n <= order; ++n) wall[n] = {weight(inside, polarisation) * f.j_slope(n), f.j[n]};
     }
-    if (cylinder.wall > 0.0 && cylinder.wall_matter.metal) {
+    const Inner& matter = cylinder.wall_matter;
+    if (cylinder.wall > 0.0 && matter.metal) {
         std::fill(wall.begin(), wall.end(), metal(polarisation));
+    } else if (cylinder.wall > 0.0 && -matter.k.imag() * cylinder.radius > opaque) {
+        std::fill(wall.begin(), wall.end(), Steepness{weight(matter, polarisation) * Complex{0.0, 1.0}, 1.0});
     } else if (cylinder.wall > 0.0) {
-        const Inner& matter = cylinder.wall_matter;
         const Complex w = weight(matter, polarisation);
         const CylinderFunctions in = cylinder_functions(matter.k * inner_radius, order);
         const CylinderFunctions out = cylinder_functions(matter.k * cylinder.radius, order);
