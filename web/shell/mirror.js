@@ -3,38 +3,41 @@
 
 const announcePause = 500; // ms: one sentence when things have settled, not one a frame
 
-function proxyFor(control, press) {
-    const node = document.createElement(control.role === 'spinbutton' || control.role === 'slider' ? 'div' : 'button');
-    node.id = `control:${control.id}`;
-    if (node.tagName === 'DIV') {
-        node.setAttribute('role', control.role);
-        node.tabIndex = 0;
+const inputs = ['spinbutton', 'slider'];
+
+function proxyFor({ id, role }, press, writing) {
+    const node = document.createElement(inputs.includes(role) || role === 'img' ? 'div' : 'button');
+    node.id = `control:${id}`;
+    node.dataset.role = role;
+    if (node.tagName === 'DIV' || role === 'checkbox') node.setAttribute('role', role);
+    if (role === 'img') return node;
+    if (node.tagName === 'BUTTON') node.type = 'button';
+    node.tabIndex = 0;
+    node.addEventListener('click', () => press(id));
+    if (role === 'slider') node.addEventListener('focus', () => press(id)); // then the arrow keys move it
+    if (role === 'spinbutton')
         node.addEventListener('keydown', (event) => {
-            if (event.key !== 'Enter' && event.key !== ' ') return;
+            if (writing() || (event.key !== 'Enter' && event.key !== ' ')) return;
             event.preventDefault();
+            event.stopPropagation();
             node.click();
         });
-    } else {
-        node.type = 'button';
-        if (control.role === 'checkbox') node.setAttribute('role', 'checkbox');
-    }
-    node.addEventListener('click', () => press(control.id));
     return node;
 }
 
-const isOn = (value) => /^(1|true|on|yes|selected|checked)$/i.test(value);
+const isOn = (value) => /^(1|true|on|yes|chosen|selected|checked)$/i.test(value);
 
 function describe(node, { role, name, value, x, y, width, height }) {
     const set = (attribute, text) => node.getAttribute(attribute) === text || node.setAttribute(attribute, text);
     const toggles = role === 'tab' || role === 'option';
     if (role === 'checkbox') set('aria-checked', String(isOn(value)));
     else if (toggles) set('aria-pressed', String(isOn(value)));
-    else if (role === 'slider' || role === 'spinbutton') {
+    else if (inputs.includes(role)) {
         const number = parseFloat(value);
         if (Number.isFinite(number)) set('aria-valuenow', String(number));
         set('aria-valuetext', value);
     }
-    set('aria-label', value && !toggles && role === 'button' ? `${name}: ${value}` : name);
+    set('aria-label', value && ['button', 'img'].includes(role) ? `${name}: ${value}` : name);
     const words = value && !toggles && role !== 'checkbox' ? `${name} ${value}` : name;
     if (node.textContent !== words) node.textContent = words;
     Object.assign(node.style, { left: `${x}px`, top: `${y}px`, width: `${width}px`, height: `${height}px` });
@@ -67,8 +70,7 @@ export function makeMirror(program, heard) {
             let node = stale.get(id);
             if (node && node.dataset.role !== control.role) node = null;
             if (node) stale.delete(id);
-            else node = proxyFor(control, press);
-            node.dataset.role = control.role;
+            else node = proxyFor(control, press, program.wants_text);
             describe(node, control);
             const next = before ? before.nextSibling : controls.firstChild;
             if (node !== next) controls.insertBefore(node, next);
