@@ -9,39 +9,47 @@ std::vector<double> band_limited(const Signal& samples, std::span<const double> 
     const std::size_t count = samples.values.size();
     if (count == 0 || !(samples.step > 0.0)) return result;
     // The trigonometric polynomial through N even samples is sum x_i sin(pi (u - i)) / (N tan(pi (u - i) / N)), u in
-    // steps; its value costs one tangent a sample, or, by the sum rule with tabled sines, one division. Silent samples
-    // are skipped.
+    // steps. sin(pi (u - i)) is the same for all samples but for the sign; the cotangent of the difference comes from
+    // tabled cotangents, b_i = pi (i + 1) / N, by the sum rule: one division a sample. Silent samples are skipped.
     const double N = 2.0 * static_cast<double>(count);
     double peak = 0.0;
     for (const double x : samples.values) peak = std::max(peak, std::abs(x));
     struct Term {
-        double place, value, sine, cosine;
+        double value, cotangent;
     };
     std::vector<Term> terms;
+    std::vector<std::size_t> before(count + 1, 0);  // terms that belong to samples before the i-th
     for (std::size_t i = 0; i < count; ++i) {
-        const double x = samples.values[i], angle = pi * static_cast<double>(i) / N;
+        const double x = samples.values[i];
         if (std::abs(x) > 1e-12 * peak)
-            terms.push_back({static_cast<double>(i), i % 2 == 0 ? x : -x, std::sin(angle), std::cos(angle)});
+            terms.push_back({i % 2 == 0 ? x : -x, 1.0 / std::tan(pi * static_cast<double>(i + 1) / N)});
+        before[i + 1] = terms.size();
     }
     for (std::size_t j = 0; j < at.size(); ++j) {
         const double u = (at[j] - samples.start) / samples.step;
-        if (!std::isfinite(u)) continue;
-        const double place = std::round(u);
-        // sin(pi (u - i)) is the same for all samples but for the sign, which the terms carry.
+        if (!(u >= -0.25 * N && u < 0.75 * N)) continue;  // beyond, the record would only repeat
+        const double place = std::round(u), beside = u - place;
         const double sign = std::fmod(std::abs(place), 2.0) == 0.0 ? 1.0 : -1.0;
-        const double common = sign * std::sin(pi * (u - place)) / N;
-        const double sine = std::sin(pi * u / N), cosine = std::cos(pi * u / N);
-        double sum = 0.0;
-        for (const Term& term : terms) {
-            if (std::abs(u - term.place) < 0.75) {  // close by, the sum rule would lose digits
-                const double angle = pi * (u - term.place) / N;
-                sum += std::abs(angle) < 1e-12 ? term.value * sign : term.value * common / std::tan(angle);
-                continue;
+        const double sine = std::sin(pi * (u + 1.0) / N), cosine = std::cos(pi * (u + 1.0) / N);
+        const auto sum = [&](std::size_t from, std::size_t to) {
+            double total = 0.0;
+            for (std::size_t i = from; i < to; ++i) {
+                const double b = terms[i].cotangent;
+                total += terms[i].value * (cosine * b + sine) / (sine * b - cosine);
             }
-            sum += term.value * common * (cosine * term.cosine + sine * term.sine) /
-                   (sine * term.cosine - cosine * term.sine);
+            return total;
+        };
+        // The nearest sample apart: there the sum rule would lose digits, or divide nothing by nothing.
+        const bool inside = place >= 0.0 && place < static_cast<double>(count);
+        const std::size_t nearest = inside ? static_cast<std::size_t>(place) : 0;
+        const double far =
+            inside ? sum(0, before[nearest]) + sum(before[nearest + 1], terms.size()) : sum(0, terms.size());
+        result[j] = sign * std::sin(pi * beside) / N * far;
+        if (inside) {
+            const double angle = pi * beside / N;
+            result[j] += samples.values[nearest] *
+                         (std::abs(angle) < 1e-12 ? 1.0 : std::sin(pi * beside) / (N * std::tan(angle)));
         }
-        result[j] = sum;
     }
     return result;
 }

@@ -64,7 +64,8 @@ struct Returned {
 Returned returned_pulse(const Stack& stack, double depth, const PulseShape& shape);
 
 /// Value of a band-limited signal between its samples, by trigonometric interpolation of the zero-padded record.
-/// `values` sampled at `step` from `start`; evaluated at each of `at` (s).
+/// `values` sampled at `step` from `start`; evaluated at each of `at` (s);
+/// 0 farther than half a record outside.
 std::vector<double> band_limited(const Signal& samples, std::span<const double> at);
 
 }  // namespace gg
