@@ -203,7 +203,7 @@ std::string set(Extent<std::vector<SitePoint>> slot, const Row&, Part, double x)
 
 double tick(const Row& row, double value) {
     if (row.step > 0) return row.step;
-    const double aim = std::max(std::abs(value), row.low + row.high * 1e-6) / 20;
+    const double aim = std::max(std::abs(value), row.low + row.high * 1e-4) / 20;
     if (!(aim > 0 && std::isfinite(aim))) return row.high / 100;
     const double decade = std::pow(10.0, std::floor(std::log10(aim)));
     return kept(decade * (aim >= 5 * decade ? 5 : aim >= 2 * decade ? 2 : 1));
