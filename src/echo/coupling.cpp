@@ -9,7 +9,6 @@ namespace gg {
 namespace {
 
 using Matrix = Eigen::Matrix<Complex, Eigen::Dynamic, Eigen::Dynamic, Eigen::RowMajor>;
-constexpr Complex i1{0.0, 1.0};
 
 Complex power_of_j(int n) {
     constexpr Complex powers[4] = {{1, 0}, {0, 1}, {-1, 0}, {0, -1}};
