@@ -94,7 +94,8 @@ TEST_CASE("rows from Davis and Annan 1989 lie within that table's ranges") {
                                                          {"saturated-sand-table", "saturated sand"},
                                                          {"rock-salt", "dry salt"}};
     const auto table = test::reference_table("davis_annan");
-    for (const auto& [id, name] : pairs) {
+    for (const auto& pair : pairs) {
+        const char *id = pair.first, *name = pair.second;
         const CatalogueRow* row = find_material(id);
         REQUIRE(row != nullptr);
         const auto published =

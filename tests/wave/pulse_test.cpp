@@ -172,7 +172,9 @@ TEST_CASE("the returned pulse is the frequency sum written out, through layers t
                                                {one("loam"), 1.0},
                                                {one("fresh-water"), 1.0},
                                                {one("concrete-table"), 0.5}};
-    for (const auto& [stack, depth] : scenes) {
+    for (const auto& scene : scenes) {
+        const Stack& stack = scene.first;
+        const double depth = scene.second;
         for (const PulseShape& shape : {ricker(), gaussian(0.8)}) {
             const Returned back = returned_pulse(stack, depth, shape);
             CAPTURE(depth);
