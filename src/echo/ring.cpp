@@ -2,24 +2,12 @@
 
 #include <algorithm>
 #include <cmath>
-#include <unsupported/Eigen/FFT>
 
 namespace gg {
 namespace {
 
 constexpr double oversampling = 1.3;
 constexpr int taps = 12;
-
-/// The next length whose only factors are 2, 3 and 5.
-int fast_length(int n) {
-    for (;; ++n) {
-        int rest = n;
-        for (const int factor : {2, 3, 5}) {
-            while (rest % factor == 0) rest /= factor;
-        }
-        if (rest == 1) return n;
-    }
-}
 
 /// Rows of positions, real and imaginary parts apart so that the compiler can work on several positions at once.
 constexpr int lane = 8;
@@ -33,8 +21,7 @@ struct Rows {
 
 /// Incident coefficients of one target for sources at ring points + offset: rows -order .. order from `row` on.
 void illuminate(const Ring& ring, double offset, int positions, const Scatterer& target, const Host& host,
-                const Spectra& spectra, int count, int row, Rows& out) {
-    static thread_local Eigen::FFT<double> transform;
+                const Spectra& spectra, int count, int row, Transform& transform, Rows& out) {
     const std::size_t n = static_cast<std::size_t>(count), size = static_cast<std::size_t>(ring.size);
     std::vector<Cx> down(n), up(n), phase(n), E(n), Q(n), P(n, Cx{1.0}), R(n, Cx{1.0});
     const double x = ring.start + offset - target.x;
@@ -60,7 +47,7 @@ void illuminate(const Ring& ring, double offset, int positions, const Scatterer&
             bins[i] += Complex(scale * phase[i] * a);
             bins[i == 0 ? 0 : size - i] += Complex(sign * (scale * conj(phase[i]) * b));
         }
-        transform.inv(field.data(), bins.data(), ring.size);
+        transform.sum(bins.data(), field.data(), ring.size);
         const std::size_t to = out.at(row + M + order);
         for (int i = 0; i < positions; ++i) {
             const Complex value = field[static_cast<std::size_t>(i) % size];
@@ -68,7 +55,6 @@ void illuminate(const Ring& ring, double offset, int positions, const Scatterer&
             out.im[to + i] = value.imag();
         }
     };
-    transform.SetFlag(Eigen::FFT<double>::Unscaled);
     constexpr Cx down_turns[4] = {{1, 0}, {0, -1}, {-1, 0}, {0, 1}};  // (-j)^n
     for (int order = 0; order <= M; ++order) {
         const Cx root = target.root[order], turned = down_turns[order & 3];
@@ -104,7 +90,8 @@ Ring ring_for(const Line& line, double widest) {
 }
 
 std::vector<Complex> echo_on(const Ring& ring, const Line& line, const std::vector<Scatterer>& targets,
-                             const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint) {
+                             const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
+                             Transform& transform) {
     int rows = 0;
     for (const Scatterer& target : targets) rows += target.size();
     const bool own = ring.shift < 0;
@@ -112,8 +99,9 @@ std::vector<Complex> echo_on(const Ring& ring, const Line& line, const std::vect
     Rows a(rows, positions + lane), own_g(own ? rows : 0, own ? ring.used + lane : 0);
     int row = 0;
     for (const Scatterer& target : targets) {
-        illuminate(ring, -0.5 * line.separation, positions, target, host, spectra, count, row, a);
-        if (own) illuminate(ring, 0.5 * line.separation, ring.used, target, host, spectra, count, row, own_g);
+        illuminate(ring, -0.5 * line.separation, positions, target, host, spectra, count, row, transform, a);
+        if (own)
+            illuminate(ring, 0.5 * line.separation, ring.used, target, host, spectra, count, row, transform, own_g);
         row += target.size();
     }
     const Rows& g = own ? own_g : a;

@@ -3,6 +3,7 @@
 #include <vector>
 
 #include "echo/coupling.hpp"
+#include "echo/transform.hpp"
 
 namespace gg {
 
@@ -28,7 +29,8 @@ Ring ring_for(const Line& line, double widest);
 /// Echo of all targets on the ring's used points, up to the constant of reciprocity: sum (-1)^n g_{q,-n} (T a)_{qn},
 /// with a and g the incident coefficients of a source at the transmitter and one at the receiver.
 std::vector<Complex> echo_on(const Ring& ring, const Line& line, const std::vector<Scatterer>& targets,
-                             const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint);
+                             const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
+                             Transform& transform);
 
 /// Adds `factor` times the values on the ring, interpolated, to one number per trace, `stride` apart.
 /// Windowed sinc of 12 points over a 1.3-fold oversampled echo: 1e-3 of what stands at the band's edge, less inside.

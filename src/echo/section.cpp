@@ -14,7 +14,6 @@
 #include "echo/noise.hpp"
 #include "echo/ring.hpp"
 #include "echo/scene.hpp"
-#include "wave/fourier.hpp"
 
 namespace gg {
 namespace {
@@ -40,7 +39,7 @@ Period period_of(const Scene& scene) {
     p.lead = std::max(0, static_cast<int>(std::ceil((s.start + onset) / p.dt)));
     p.start = s.start - p.lead * p.dt;
     p.size = (s.samples + p.lead) * 11 / 10 + 2;
-    p.size += p.size & 1;
+    while ((p.size = fast_length(p.size)) % 2 != 0) ++p.size;
     return p;
 }
 
@@ -138,13 +137,13 @@ class Engine {
         }
     }
 
-    std::vector<double> trace(std::size_t row) const {
-        std::vector<Complex> half(field_.begin() + row * bins_, field_.begin() + (row + 1) * bins_);
-        std::vector<double> t = inverse(half, static_cast<std::size_t>(period_.size));
+    std::vector<double> trace(std::size_t row) {
+        std::vector<double> t(static_cast<std::size_t>(period_.size));
+        transform_.sum_real(field_.data() + row * bins_, t.data(), period_.size);
         std::vector<double> out(static_cast<std::size_t>(scene_.sampling.samples));
         for (std::size_t i = 0; i < out.size(); ++i) {
             const double time = (static_cast<double>(i) + period_.lead) * period_.dt;
-            out[i] = t[i + static_cast<std::size_t>(period_.lead)] * std::exp(delta_ * time) / period_.dt;
+            out[i] = t[i + static_cast<std::size_t>(period_.lead)] * std::exp(delta_ * time) / period_.length();
         }
         return out;
     }
@@ -188,12 +187,7 @@ class Engine {
         const double dk = 2.0 * pi / (ring.size * ring.spacing);
         const int count_in = static_cast<int>(widest / dk) + 2;
         const int count_between = static_cast<int>(std::hypot(k_host, reach_between) / dk) + 2;
-        int count = targets.empty() ? 0 : std::max(count_in, count_between);
-        const bool layered = scene_.ground.slabs.size() > 1;
-        if (layered) {
-            const double k_first = media.ground[1].k.real(), depth = scene_.ground.slabs[0].thickness + scene_.height;
-            count = std::max(count, static_cast<int>(std::hypot(k_first, 0.5 * fall / depth) / dk) + 2);
-        }
+        const int count = targets.empty() ? 0 : std::max(count_in, count_between);
         Spectra spectra;
         if (count > 0) spectra = spectra_of(media, scene_.ground, host_, scene_.height, scene_.polarisation, dk, count);
 
@@ -213,19 +207,26 @@ class Engine {
                 along ? -4.0 / (tone.w * vacuum_permeability)
                       : 4.0 / (tone.w * vacuum_permittivity * media.ground[host_.layer].permittivity);
             const std::vector<Complex> joint = joint_answer(targets, host_, spectra, count_between);
-            const std::vector<Complex> echo = echo_on(ring, line_, targets, host_, spectra, count_in, joint);
+            const std::vector<Complex> echo =
+                echo_on(ring, line_, targets, host_, spectra, count_in, joint, transform_);
             std::vector<Complex> traces(static_cast<std::size_t>(line_.traces));
             onto_traces(ring, line_, echo, constant, traces.data(), 1);
             for (std::size_t i = 0; i < traces.size(); ++i) put(i, traces[i]);
         }
-        if (layered) put(layers_row(), layers_echo(spectra, tone.w));
+        if (scene_.ground.slabs.size() > 1) put(layers_row(), layers_echo(media, fall));
         const double nearest = speed_of_light / (20.0 * scene_.pulse.centre_frequency);
         put(direct_row(), direct_wave(media, std::max(scene_.separation, nearest), scene_.height, scene_.polarisation));
     }
 
-    /// Echo of the boundaries below the surface at the receiver, per unit source.
-    Complex layers_echo(const Spectra& s, Complex w) const {
+    /// Echo of the boundaries below the surface at the receiver, per unit source. Its sum over kx closes after the way
+    /// of light in a period: along the surface images are not weak.
+    Complex layers_echo(const Media& media, double fall) const {
         const bool along = scene_.polarisation == Polarisation::along;
+        const double dk = 2.0 * pi / (speed_of_light * period_.length() + 2.0 * scene_.separation);
+        const double deepest = 0.5 * fall / (scene_.ground.slabs[0].thickness + scene_.height);
+        const int count = static_cast<int>(std::hypot(media.ground[1].k.real(), deepest) / dk) + 2;
+        const Spectra s = spectra_of(media, scene_.ground, host_, scene_.height, scene_.polarisation, dk, count);
+        const Complex w = media.w;
         Cx sum;
         for (std::size_t i = 0; i < s.size(); ++i) {
             const double kx = static_cast<double>(i) * s.spacing;
@@ -244,6 +245,7 @@ class Engine {
     double delta_;
     Line line_;
     std::size_t bins_ = 0;
+    Transform transform_;
     std::vector<Complex> field_;  ///< rows of half spectra: traces, then layers, then direct
 };
 
