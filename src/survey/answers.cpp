@@ -82,6 +82,9 @@ Answers answers_for(const Plan& plan) {
         // A layer's own answers carry its own issue; what only counts lines does not rest on the ground.
         if (issue == Issue::none || a.key.starts_with("layer.") || a.quantity == Quantity::count) continue;
         if (a.likely.issue == Issue::none) a.likely.issue = Issue::outside_band;
+        if (a.group != Group::pulse) continue;
+        a.why += ' ';
+        a.why += sentence(issue);
     }
     tell(answers, sane);
     return answers;

@@ -12,21 +12,19 @@ namespace {
 double upright(const EchoPulse& e, double t, bool rings) { return rings ? e.envelope(t) : e.at(t).real(); }
 
 bool rings(const EchoPulse& e) {
-    double side = 0.0, before = e.at(0.0).real();
+    double side = 0.0;
     bool fell = false;
-    for (double t = e.width / 32.0; t < 4.0 * e.width; t += e.width / 32.0) {
+    for (double t = 0.0; t < 3.0 * e.width; t += e.width / 16.0) {
         const double now = e.at(t).real();
         fell = fell || now < 0.0;
         if (fell) side = std::max(side, now);
-        before = now;
     }
-    (void)before;
     return side > 0.5;
 }
 
 double dip_of(const EchoPulse& e, double delay, bool ringing) {
     if (!(delay > 0.0)) return 0.0;
-    constexpr int n = 32;
+    constexpr int n = 24;
     const double pad = 0.25 * std::min(delay, e.width);
     const auto sum = [&](double t) {
         if (ringing) return std::max(upright(e, t, true), upright(e, t - delay, true));
@@ -78,6 +76,10 @@ void add_downwards(const Scene& scene, Answers& answers) {
     a.formula =
         "Half the speed at the target times the smallest delay at which two equal returned pulses leave a dip of 19 "
         "percent between their crests (Rayleigh's dip).";
+    if (const Value delay = smallest_delay(c.echo, apart_dip); !delay.ok()) {
+        a.likely.issue = delay.issue;
+        a.why = "The returned pulse rings so long that two layers never show as two.";
+    }
     const double v = c.wave().speed;
     a.rules = {{"a quarter of the wavelength", 0.25 * v / f, "Annan & Cosway 1992; geoscixyz GPG, GPR survey data"},
                {"pulse width x speed / 2", 0.5 * v * c.echo.width, "geometry, with the returned pulse's width"}};

@@ -8,8 +8,7 @@
 namespace gg {
 namespace {
 
-constexpr int table_size =
-    512;  // eight times the lines: cubic interpolation of the carrier-free record is good to 1e-4
+constexpr int table_size = 512;  // eight times the lines, see at()
 constexpr double floor_db = 70.0;
 
 Complex turn(double angle) { return {std::cos(angle), std::sin(angle)}; }
@@ -19,11 +18,16 @@ Complex turn(double angle) { return {std::cos(angle), std::sin(angle)}; }
 PathSpectrum::PathSpectrum(const Stack& stack, const PulseShape& shape) {
     const Band band = band_of(shape, floor_db);
     spacing = band.width() / lines;
-    // Lines stand on whole multiples of the spacing's half from the band's edge, so that none falls on 0 Hz.
+    // In the middle of each strip of the band, so that none falls on 0 Hz.
     first = band.low + 0.5 * spacing;
-    centre = shape.centre_frequency;
     sent.resize(lines);
-    for (int i = 0; i < lines; ++i) sent[i] = spectrum_at(shape, frequency(i));
+    double sum = 0.0;
+    for (int i = 0; i < lines; ++i) {
+        sent[i] = spectrum_at(shape, frequency(i));
+        sum += sent[i];
+        sent_frequency += sent[i] * frequency(i);
+    }
+    sent_frequency /= sum;
     wavenumber.reserve(stack.slabs.size() * lines);
     for (const Slab& slab : stack.slabs) {
         for (int i = 0; i < lines; ++i) wavenumber.push_back(plane_wave(slab.material, frequency(i)).wavenumber);
@@ -65,7 +69,7 @@ EchoPulse::EchoPulse(const PathSpectrum& spectrum, const Stack& stack, double de
         padded[bin] = amplitude * turn(exponent[i].imag() + 2.0 * pi * f * delay);
     }
     frequency = moment / sum;
-    carrier_ = spectrum.frequency(middle);
+    const double carrier_frequency = spectrum.frequency(middle);
     const std::vector<Complex> record = inverse(padded);
     step_ = 1.0 / (spectrum.spacing * table_size);
     reach = 0.5 * table_size * step_;
@@ -82,55 +86,60 @@ EchoPulse::EchoPulse(const PathSpectrum& spectrum, const Stack& stack, double de
     const int offset = top_at < table_size / 2 ? top_at : top_at - table_size;
     arrival = delay + (offset + shift) * step_ + 2.0 * height / speed_of_light;
 
+    // The carrier goes into the table, so that reading it needs no sine; the origin moves from the grid's highest
+    // instant to the true peak, and the record is scaled to 1 there.
     table_.resize(table_size);
-    for (int i = 0; i < table_size; ++i) table_[i] = record[(top_at + i + table_size / 2) % table_size];
-    // The origin moves from the grid's highest instant to the true peak, and the record is scaled to 1 there.
-    const double off = shift * step_;
-    const Complex peak = at(off) * turn(-2.0 * pi * carrier_ * off);
+    Complex carrier = turn(-2.0 * pi * carrier_frequency * reach);
+    const Complex onward = turn(2.0 * pi * carrier_frequency * step_);
+    for (int i = 0; i < table_size; ++i) {
+        table_[i] = carrier * record[(top_at + i + table_size / 2) % table_size];
+        carrier *= onward;
+    }
+    const Complex peak = at(shift * step_);
     for (Complex& z : table_) z /= peak;
-    origin_ = off;
-    phase = peak / std::abs(peak) * turn(2.0 * pi * carrier_ * (offset * step_ + off));
+    origin_ = shift * step_;
+    phase = peak / std::abs(peak) * turn(2.0 * pi * carrier_frequency * offset * step_);
     loss = -decibel_per_neper * (strongest + std::log(table_size * std::abs(peak) / sent_sum));
+    measure();
+}
 
-    const auto first_below = [&](double level_at, double sign) {
-        double t = 0.0;
-        const double dt = step_;
-        while (t < reach && envelope(sign * t) > level_at) t += dt;
-        const double e1 = envelope(sign * t), e0 = envelope(sign * (t - dt));
-        return t - (e0 > e1 ? dt * (level_at - e1) / (e0 - e1) : 0.0);
+void EchoPulse::measure() {
+    const int middle = table_size / 2;
+    // Half-width on one side, from the first grid instant under half the peak back to the crossing.
+    const auto half = [&](int sense) {
+        int i = middle;
+        while (i > 1 && i < table_size - 2 && std::norm(table_[i]) > 0.25) i += sense;
+        const double here = std::abs(table_[i]), before = std::abs(table_[i - sense]);
+        const double back = before > here ? (0.5 - here) / (before - here) : 0.0;
+        return ((i - middle) * sense - back) * step_;
     };
-    width = first_below(0.5, -1.0) + first_below(0.5, 1.0);
-    const auto last_above = [&](double sign) {
-        double t = 0.8 * reach;
-        while (t > step_ && envelope(sign * t) < 0.05) t -= step_;
-        return t;
+    width = half(-1) + half(1);
+    const auto last_above = [&](int sense) {
+        int i = middle + sense * 2 * table_size / 5;
+        while (i != middle && std::norm(table_[i]) < 0.05 * 0.05) i -= sense;
+        return std::max(1, (i - middle) * sense) * step_;
     };
-    lead = last_above(-1.0);
-    tail = last_above(1.0);
+    lead = last_above(-1);
+    tail = last_above(1);
 }
 
 Complex EchoPulse::at(double t) const {
     const double place = (t + origin_ + reach) / step_;
-    if (!(place >= 1.0 && place < table_size - 3)) return {0.0, 0.0};
+    if (!(place >= 2.0 && place < table_size - 4)) return {0.0, 0.0};
     const int i = static_cast<int>(place);
     const double u = place - i;
-    // Cubic (Lagrange) through four neighbours.
-    const double w0 = -u * (u - 1.0) * (u - 2.0) / 6.0, w1 = (u + 1.0) * (u - 1.0) * (u - 2.0) / 2.0;
-    const double w2 = -(u + 1.0) * u * (u - 2.0) / 2.0, w3 = (u + 1.0) * u * (u - 1.0) / 6.0;
-    const double re =
-        w0 * table_[i - 1].real() + w1 * table_[i].real() + w2 * table_[i + 1].real() + w3 * table_[i + 2].real();
-    const double im =
-        w0 * table_[i - 1].imag() + w1 * table_[i].imag() + w2 * table_[i + 1].imag() + w3 * table_[i + 2].imag();
-    const double c = std::cos(2.0 * pi * carrier_ * t), s = std::sin(2.0 * pi * carrier_ * t);
-    return {re * c - im * s, re * s + im * c};
+    // Lagrange through six neighbours at -2 .. 3: with 17 places a period of the centre frequency good to 1e-5.
+    const double a = u + 2.0, b = u + 1.0, c = u, d = u - 1.0, e = u - 2.0, f = u - 3.0;
+    const double ab = a * b, ef = e * f, cd = c * d;
+    const double w0 = -b * cd * ef / 120.0, w1 = a * cd * ef / 24.0, w2 = -ab * d * ef / 12.0;
+    const double w3 = ab * c * ef / 12.0, w4 = -ab * cd * f / 24.0, w5 = ab * cd * e / 120.0;
+    const Complex* z = table_.data() + i - 2;
+    return {
+        w0 * z[0].real() + w1 * z[1].real() + w2 * z[2].real() + w3 * z[3].real() + w4 * z[4].real() + w5 * z[5].real(),
+        w0 * z[0].imag() + w1 * z[1].imag() + w2 * z[2].imag() + w3 * z[3].imag() + w4 * z[4].imag() +
+            w5 * z[5].imag()};
 }
 
-double EchoPulse::envelope(double t) const {
-    const double place = (t + origin_ + reach) / step_;
-    if (!(place >= 1.0 && place < table_size - 3)) return 0.0;
-    const int i = static_cast<int>(place);
-    const double u = place - i;
-    return (1.0 - u) * std::sqrt(std::norm(table_[i])) + u * std::sqrt(std::norm(table_[i + 1]));
-}
+double EchoPulse::envelope(double t) const { return std::sqrt(std::norm(at(t))); }
 
 }  // namespace gg

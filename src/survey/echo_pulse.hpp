@@ -12,7 +12,7 @@ struct PathSpectrum {
     PathSpectrum(const Stack& stack, const PulseShape& shape);
     static constexpr int lines = 64;
     double first = 0.0, spacing = 0.0;  ///< Hz
-    double centre = 0.0;                ///< Hz, of the sent pulse
+    double sent_frequency = 0.0;        ///< Hz, mean of the sent amplitude spectrum
     std::vector<double> sent;           ///< amplitude, `lines` of them
     std::vector<Complex> wavenumber;    ///< 1/m, layer by layer
     double frequency(int i) const { return first + i * spacing; }
@@ -40,8 +40,9 @@ class EchoPulse {
     double reach = 0.0;             ///< s, half-length of the record
 
   private:
-    std::vector<Complex> table_;  ///< at carrier frequency taken out, even steps from -reach
-    double step_ = 1.0, carrier_ = 0.0, origin_ = 0.0;
+    void measure();
+    std::vector<Complex> table_;  ///< even steps from -reach; the peak stands `origin_` after the middle
+    double step_ = 1.0, origin_ = 0.0;
 };
 
 }  // namespace gg

@@ -168,9 +168,16 @@ void sample_answers(const Scene& scene, Answers& answers) {
     mend(cycle);
 
     const RebuildError likely = rebuild_error(c.echo, chosen);
+    // The finer the returned pulse, the more it asks: its ends over the unknown are those of its frequency.
+    const Case *low = &c, *high = &c;
+    for (const Case& k : scene.cases.all) {
+        if (k.echo.frequency < low->echo.frequency) low = &k;
+        if (k.echo.frequency > high->echo.frequency) high = &k;
+    }
     Spread spread = just(likely.band_limited);
-    for (std::size_t i = 1; i < scene.cases.all.size(); ++i) {
-        const double e = rebuild_error(scene.cases.all[i].echo, chosen).band_limited;
+    for (const Case* k : {low, high}) {
+        if (k == &c) continue;
+        const double e = rebuild_error(k->echo, chosen).band_limited;
         spread.low = std::min(spread.low, e);
         spread.high = std::max(spread.high, e);
     }

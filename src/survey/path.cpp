@@ -49,7 +49,8 @@ Leg leg_to(const Path& path, double offset) {
         }
         const double step = (X - x) / dx;
         q += step;
-        if (!(std::abs(step) > 1e-12 * q)) break;
+        // The time is stationary about the true ray, and the step just taken has squared the error.
+        if (!(std::abs(step) > 1e-6 * q)) break;
     }
     Leg leg;
     const double all = std::sqrt(1.0 + q * q);

@@ -25,7 +25,7 @@ void draw_pulse(const Scene& scene, Answers& answers) {
     for (int i = from; i < to; ++i) picture.samples.values[i] = echo.trace(i * interval - arrival);
 
     const double before = std::min(echo.reach, 1.5 * echo.lead), after = std::min(echo.reach, 1.5 * echo.tail);
-    constexpr int points = 240;
+    constexpr int points = 160;
     picture.returned.start = arrival - before;
     picture.returned.step = (before + after) / points;
     picture.returned.values.resize(points + 1);

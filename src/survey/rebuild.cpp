@@ -9,9 +9,9 @@ RebuildError rebuild_error(const EchoPulse& echo, double interval) {
     RebuildError worst;
     if (!(interval > 0.0 && echo.width > 0.0)) return worst;
     const double dt = std::max(interval, echo.width / 40.0);
-    const double span = std::min(0.95 * echo.reach, 2.0 * std::max(echo.lead, echo.tail) + 2.0 * dt);
+    const double span = std::min(0.95 * echo.reach, 1.8 * std::max(echo.lead, echo.tail) + 2.0 * dt);
     const int half = std::min(400, static_cast<int>(span / dt) + 1);
-    constexpr int phases = 4, places = 48;
+    constexpr int phases = 4, places = 32;
     const double from = -1.2 * echo.width, to = 1.2 * echo.width;
     double truth[places + 1];
     for (int k = 0; k <= places; ++k) truth[k] = echo.trace(from + (to - from) * k / places);
