@@ -45,13 +45,13 @@ Cut make_cut(const Plan& plan, const Answers& answers, const FigureStyle& style)
     bottom = nice_ceiling(bottom);
     const double height = std::max(0.0, plan.antenna.height);
     Cut cut;
-    const double gutter = std::min(0.2 * style.box.width, 3.1 * style.text);
+    const double gutter = std::min(0.2 * style.box.width, 3.7 * style.text);
     cut.plot = {style.box.x + gutter, style.box.y, style.box.width - gutter, style.box.height};
     const double air = std::min(0.3 * style.box.height, 3.6 * style.text);
-    const double half = 1.2 * std::max({answers.beam.patch_along, 0.8 * plan.antenna.separation, 1.2 * size,
+    const double half = 1.1 * std::max({answers.beam.patch_along, 0.8 * plan.antenna.separation, 1.2 * size,
                                         plan.target.count > 1 ? std::min(plan.target.gap + size, bottom) : 0.0});
     cut.scale = (cut.plot.height - air) / (bottom + height);
-    if (half > 0) cut.scale = std::min(cut.scale, 0.5 * cut.plot.width / half);
+    if (half > 0) cut.scale = std::min(cut.scale, 0.5 * cut.plot.width / nice_ceiling(half));
     cut.surface = cut.plot.y + air + height * cut.scale;
     cut.middle = cut.plot.x + 0.5 * cut.plot.width;
     return cut;
@@ -354,7 +354,7 @@ Figure beam_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     label_layers(b);
     draw_depth_axis(b);
     b.figure.description = description_of(b);
-    draw_grips(canvas, colours, b.figure, style);
+    finish_handles(canvas, colours, b.figure, style);
     canvas.pop_clip();
     return b.figure;
 }

@@ -61,15 +61,24 @@ void draw_lines(Site& s) {
     }
 }
 
+/// A stretch of ground along the target, with square ends.
+void draw_band(Site& s, Point a, Point b, double width, Colour fill) {
+    const double d = std::hypot(b.x - a.x, b.y - a.y);
+    if (!(d > 0)) return;
+    const double nx = -(b.y - a.y) / d * width / 2, ny = (b.x - a.x) / d * width / 2;
+    s.canvas.area(points({{a.x + nx, a.y + ny}, {b.x + nx, b.y + ny}, {b.x - nx, b.y - ny}, {a.x - nx, a.y - ny}}),
+                  fill);
+}
+
 void draw_target(Site& s) {
     const LanesPicture& lanes = s.answers.lanes;
     const Point a = s.map.at(lanes.target_from), b = s.map.at(lanes.target_to);
     const double width = std::max(6.0, s.plan.target.size * s.map.scale);
-    s.canvas.line(points({a, b}), {s.colours.wave.with_alpha(0.3), width + 6});
+    draw_band(s, a, b, width + 6, s.colours.wave.with_alpha(0.3));
     s.canvas.line(points({a, b}), {s.colours.wave, 2});
     for (std::size_t i = 0; i < std::min<std::size_t>(lanes.gaps.size(), 200); ++i) {
         const Point c = s.map.at(lanes.gaps[i].from), d = s.map.at(lanes.gaps[i].to);
-        s.canvas.line(points({c, d}), {s.colours.paper, width + 2});
+        draw_band(s, c, d, width + 8, s.colours.paper);
         s.canvas.line(points({c, d}), {s.colours.warn, 3, 6, 5});
     }
     const std::size_t every = std::max<std::size_t>(1, lanes.hits.size() / 300);
@@ -207,7 +216,7 @@ Figure lanes_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
                    s.map.scale, colours, style);
     s.figure.description = sentence_of(s) + "; " + say(answers.lanes.distance, Quantity::length, style.units) +
                            " walked, lines " + say(plan.lanes.spacing, Quantity::length, style.units) + " apart.";
-    draw_grips(canvas, colours, s.figure, style);
+    finish_handles(canvas, colours, s.figure, style);
     canvas.pop_clip();
     return s.figure;
 }

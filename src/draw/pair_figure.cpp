@@ -19,6 +19,7 @@ struct Pair {
     Box curve, panel, ground;        ///< from the top: strength along the line, travel times, targets to scale
     double from = 0.0, to = 1.0;     ///< m along the line
     double first = 0.0, last = 1.0;  ///< s, of the panel
+    double most = 1.0;               ///< strength that fills the curve's box
     Figure figure;
 
     double x(double position) const { return panel.x + (position - from) / (to - from) * panel.width; }
@@ -42,7 +43,7 @@ std::vector<Point> strength(const Pair& p, const std::vector<double>& values) {
     for (std::size_t i = 0; i < n; i += stride) {
         if (std::isfinite(values[i]))
             out.push_back(
-                {p.x(pair.positions[i]), p.curve.bottom() - std::clamp(values[i], 0.0, 2.0) / 2.0 * p.curve.height});
+                {p.x(pair.positions[i]), p.curve.bottom() - std::clamp(values[i] / p.most, 0.0, 1.0) * p.curve.height});
     }
     return out;
 }
@@ -150,13 +151,14 @@ void draw_ground(Pair& p) {
         p.labels.keep_round({x, y}, r);
     }
     draw_dimension(p.canvas, {left, y}, {right, y}, {p.colours.wave, 1.6});
+    // The pair stands even about its middle: each of the two moves half of what the gap does.
     const Point grip = inside({right + r + grip_radius + 4, y}, p.ground, grip_radius + 2);
     p.figure.handles.push_back({"target.gap",
                                 "Gap, centre to centre",
                                 grip,
                                 Handle::Way::across,
                                 p.plan.target.gap,
-                                1 / p.scale(),
+                                2 / p.scale(),
                                 {},
                                 0.01,
                                 false,
@@ -240,10 +242,18 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     p.curve = {box.x + gutter, box.y + head, width, hill};
     p.panel = {box.x + gutter, p.curve.bottom() + shade + 8, width, box.height - head - hill - strip - shade - 20};
     p.ground = {box.x + gutter, p.panel.bottom() + 6, width, strip};
-    p.from = pair.positions.front();
-    p.to = pair.positions.back();
+    // A round stretch about the pair's middle, so that the scale stands still while the gap is dragged a little.
+    const double middle = pair.first + 0.5 * plan.target.gap;
+    const double reach = nice_floor(std::min(middle - pair.positions.front(), pair.positions.back() - middle));
+    p.from = middle - reach;
+    p.to = middle + reach;
     const double apex = std::min(least_of(pair.arrival_left), least_of(pair.arrival_right));
     show_times(p, apex);
+    for (const auto* curve : {&pair.response, &pair.alone_left, &pair.alone_right}) {
+        for (const double v : *curve) {
+            if (std::isfinite(v)) p.most = std::max(p.most, 1.04 * v);
+        }
+    }
     if (!(width > 8 && p.panel.height > 8)) return {{}, "No room to draw."};
 
     canvas.push_clip(box);
@@ -257,7 +267,7 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     draw_time_axis(p);
     p.figure.description = "Two neighbours " + say(plan.target.depth.likely, Quantity::length, style.units) +
                            " deep: " + verdict_words(pair.verdict) + ". " + sentence_of(p) + " " + least_words(p);
-    draw_grips(canvas, colours, p.figure, style);
+    finish_handles(canvas, colours, p.figure, style);
     canvas.pop_clip();
     return p.figure;
 }

@@ -60,7 +60,10 @@ void draw_grip(Canvas& canvas, const Palette& colours, const Handle& handle, boo
     }
 }
 
-void draw_grips(Canvas& canvas, const Palette& colours, const Figure& figure, const FigureStyle& style) {
+void finish_handles(Canvas& canvas, const Palette& colours, Figure& figure, const FigureStyle& style) {
+    std::erase_if(figure.handles, [&](const Handle& h) {
+        return !(style.box.holds(h.at) && std::isfinite(h.start) && std::isfinite(h.per_px));
+    });
     if (!style.handles) return;
     for (const Handle& handle : figure.handles) draw_grip(canvas, colours, handle, handle.field == style.held);
 }
@@ -79,13 +82,28 @@ double nice_step(double least) {
     return 10.0 * power;
 }
 
+namespace {
+constexpr std::array round_numbers{1.0, 1.5, 2.0, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0};
+double power_below(double x) { return std::pow(10.0, std::floor(std::log10(x))); }
+}  // namespace
+
 double nice_ceiling(double least) {
     if (!(least > 0) || !std::isfinite(least)) return 1.0;
-    const double power = std::pow(10.0, std::floor(std::log10(least)));
-    for (const double m : {1.0, 1.5, 2.0, 3.0, 4.0, 5.0, 6.0, 8.0}) {
+    const double power = power_below(least);
+    for (const double m : round_numbers) {
         if (m * power >= least * (1 - 1e-9)) return m * power;
     }
     return 10.0 * power;
+}
+
+double nice_floor(double most) {
+    if (!(most > 0) || !std::isfinite(most)) return 1.0;
+    const double power = power_below(most);
+    double out = power;
+    for (const double m : round_numbers) {
+        if (m * power <= most * (1 + 1e-9)) out = m * power;
+    }
+    return out;
 }
 
 std::vector<double> ticks(double low, double high, int most) {

@@ -34,8 +34,9 @@ constexpr double grip_radius = 12.0;  ///< css px
 
 /// The sign of a thing that can be dragged: an accent disc with chevrons the way it goes; stronger while held.
 void draw_grip(Canvas& canvas, const Palette& colours, const Handle& handle, bool held);
-/// Draws each handle's grip when the style wants them.
-void draw_grips(Canvas& canvas, const Palette& colours, const Figure& figure, const FigureStyle& style);
+/// The last thing a picture does: leaves out handles that are not numbers or not in the picture, as a plan that makes
+/// no sense may give, and draws the grips of the others when the style wants them.
+void finish_handles(Canvas& canvas, const Palette& colours, Figure& figure, const FigureStyle& style);
 
 /// A few points in place, for Canvas::line and area.
 template <std::size_t N>
@@ -52,6 +53,7 @@ Point inside(Point p, Box box, double margin);
 std::vector<double> ticks(double low, double high, int most);
 double nice_step(double least);     ///< smallest of 1, 2, 5 times a power of ten that is not below
 double nice_ceiling(double least);  ///< smallest of 1, 1.5, 2, 3, 4, 5, 6, 8 times a power of ten that is not below
+double nice_floor(double most);     ///< the largest of them that is not above
 
 /// The one unit of a length axis that shows `extent` m: "m", "mm", "ft" or "in".
 struct AxisUnit {

@@ -11,10 +11,12 @@ namespace {
 /// A stretch of time on a stretch of screen.
 struct Axis {
     double from = 0.0, to = 1.0;  ///< s
-    Box box;                      ///< amplitude 1 reaches to 0.42 of its height from the middle
-    double gain = 0.42;
+    Box box;
+    double low = -1.0, high = 1.0;  ///< amplitudes at the bottom and the top
     double x(double time) const { return box.x + (time - from) / (to - from) * box.width; }
-    double y(double value) const { return box.y + 0.5 * box.height - gain * box.height * std::clamp(value, -1.3, 1.3); }
+    double y(double value) const {
+        return box.bottom() - (std::clamp(value, -9.0, 9.0) - low) / (high - low) * box.height;
+    }
     double px_per_second() const { return box.width / (to - from); }
 };
 
@@ -67,6 +69,18 @@ Stretch busy(const Signal& s) {
     while (first < last && !(std::abs(s.values[first]) > 0.05 * peak)) ++first;
     while (last > first && !(std::abs(s.values[last]) > 0.05 * peak)) --last;
     return {s.time(first), s.time(last)};
+}
+
+/// Lets a signal fill its box but for a share free above and below.
+void fit(Axis& axis, const Signal& s, double above, double below) {
+    double low = 0.0, high = 0.0;
+    for (const double v : s.values) {
+        if (std::isfinite(v)) low = std::min(low, v), high = std::max(high, v);
+    }
+    if (!(high - low > 1e-12)) return;
+    const double whole = (high - low) / (1 - above - below);
+    axis.high = high + above * whole;
+    axis.low = low - below * whole;
 }
 
 std::string nanoseconds(double t, UnitSystem units) { return say(t, Quantity::time, units); }
@@ -223,7 +237,8 @@ void draw_sent(Pulse& p, Box box) {
     const Stretch part = busy(sent);
     const double half = 0.62 * (part.to - part.from), middle = 0.5 * (part.from + part.to);
     if (!(half > 0)) return;
-    const Axis axis{middle - half, middle + half, box, 0.46};
+    Axis axis{middle - half, middle + half, box};
+    fit(axis, sent, 0.06, 0.06);
     p.canvas.push_clip(box);
     p.canvas.line(curve(axis, sent, sent.values), {p.colours.soft_ink, 1.8});
     p.canvas.pop_clip();
@@ -293,6 +308,9 @@ Figure pulse_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     p.all.to = nice_ceiling(1.12 * std::max(plan.pass.window, busy_part.to));
     if (!(p.zoom.box.height > 8) || !(p.zoom.to > p.zoom.from) || !(p.all.to > 0)) return {{}, "No room to draw."};
 
+    // Below the trace there has to be room for the ruler of samples.
+    fit(p.zoom, pulse.returned, 0.1, std::clamp((2 * grip_radius + 16) / p.zoom.box.height, 0.1, 0.5));
+    fit(p.all, pulse.returned, 0.1, 0.1);
     canvas.push_clip(box);
     canvas.box(box, colours.paper);
     const double sent_width = std::min(0.34 * inner.width, 220.0);
@@ -310,7 +328,7 @@ Figure pulse_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     p.labels.keep({inner.right() - 2.2 * small, p.all.box.bottom() + 2, 2.2 * small, 1.4 * small});
     time_ticks(p, p.all);
     p.figure.description = description_of(p);
-    draw_grips(canvas, colours, p.figure, style);
+    finish_handles(canvas, colours, p.figure, style);
     canvas.pop_clip();
     return p.figure;
 }

@@ -172,7 +172,9 @@ std::string say(double si, Quantity quantity, UnitSystem units) {
     if (quantity == Quantity::angle || quantity == Quantity::temperature) return joined(fixed(x, 0), unit.name);
     // Metres under ten always show centimetres, "0.90 m", so that a dragged number does not change its length.
     if (is_metre(unit) && std::abs(x) < 9.995) return joined(fixed(x, 2), unit.name);
-    return joined(significant(x, 3), unit.name);
+    // Millimetres that stand for a length under a tenth of a metre are whole; a bar's or a step's may be 12.5.
+    const int digits = quantity == Quantity::length && std::string_view(unit.name) == "mm" ? 2 : 3;
+    return joined(significant(x, digits), unit.name);
 }
 
 std::string say_exactly(double si, Quantity quantity, UnitSystem units) {
@@ -285,8 +287,8 @@ std::string spell(std::string_view words, UnitSystem units) {
         out += words.substr(0, open);
         if (open == std::string_view::npos) break;
         words.remove_prefix(open);
-        const std::size_t close = words.find('}'), bar = words.find('|');
-        if (close == std::string_view::npos || bar == std::string_view::npos || bar > close) {
+        const std::size_t close = words.find('}'), bar = words.find('|'), again = words.find('{', 1);
+        if (close == std::string_view::npos || bar == std::string_view::npos || bar > close || again < close) {
             out += '{';
             words.remove_prefix(1);
             continue;
