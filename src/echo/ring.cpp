@@ -6,8 +6,8 @@
 namespace gg {
 namespace {
 
-constexpr double oversampling = 1.3;
-constexpr int taps = 12;
+constexpr double oversampling = 1.4;
+constexpr int taps = 16;
 
 /// Rows of positions, real and imaginary parts apart so that the compiler can work on several positions at once.
 constexpr int lane = 8;

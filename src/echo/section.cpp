@@ -19,8 +19,8 @@ namespace gg {
 namespace {
 
 constexpr double damping = 6.0;     // delta T, Np
-constexpr double faintest = 3e-5;   // of the pulse's spectral peak
-constexpr double air_share = 0.35;  // of the way light goes in a period: see way_round
+constexpr double faintest = 1e-4;   // of the pulse's spectral peak
+constexpr double air_share = 0.6;   // of the way light goes in a period: see way_round
 constexpr double tolerance = 1e-4;  // of the strongest part, at the pulse's peak frequency
 
 /// Time grid that holds the wanted samples, starts before anything is sent and has a fast length.
@@ -38,7 +38,15 @@ Period period_of(const Scene& scene) {
     const double onset = std::sqrt(2.0 * order_of(scene.pulse) * 18.4) / (2.0 * pi * scene.pulse.centre_frequency);
     p.lead = std::max(0, static_cast<int>(std::ceil((s.start + onset) / p.dt)));
     p.start = s.start - p.lead * p.dt;
-    p.size = (s.samples + p.lead) * 11 / 10 + 2;
+    // What comes after the period wraps round: it has to be the tail of an echo, not the echo itself, even where the
+    // window is too short to show it.
+    double latest = s.start + s.window;
+    for (const RoundTarget& t : scene.targets) {
+        const double down = time_down(scene.ground, t.depth + t.radius, scene.pulse.centre_frequency).value;
+        latest = std::max(latest, 2.0 * (down + scene.height / speed_of_light) + 4.0 * onset);
+    }
+    const double wanted = 1.1 * std::ceil((latest - p.start) / p.dt) + 2.0;
+    p.size = static_cast<int>(std::min(wanted, 40.0 * (s.samples + p.lead)));
     while ((p.size = fast_length(p.size)) % 2 != 0) ++p.size;
     return p;
 }

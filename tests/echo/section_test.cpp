@@ -70,7 +70,8 @@ Scene random_scene(std::mt19937& random) {
         if (between(0, 1) < 0.3) t.wall = RoundTarget::Wall{0.3 * t.radius, constant_material(2.3, 0.0)};
         s.targets.push_back(t);
     }
-    s.sampling = {-0.3, 0.2, 8, 0.0, 12.0 / s.pulse.centre_frequency, 128};
+    const double down = time_down(s.ground, top + 0.16, s.pulse.centre_frequency).value + s.height / speed_of_light;
+    s.sampling = {-0.3, 0.2, 8, 0.0, 12.0 / s.pulse.centre_frequency + 2.0 * down, 160};
     return s;
 }
 
@@ -189,9 +190,8 @@ TEST_CASE("Nothing arrives before the fastest way to a target and back") {
             double first = 1e9;
             for (const RoundTarget& t : s.targets) {
                 double way = 0.0;
-                for (const double side : {-0.5, 0.5}) {
+                for (int leg = 0; leg < 2; ++leg) {
                     // No refracted path is shorter than each layer's thickness crossed upright.
-                    (void)side;
                     way += s.height / speed_of_light;
                     const int host = layer_at(s.ground, t.depth);
                     for (int l = 0; l <= host; ++l) {
