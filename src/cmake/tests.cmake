@@ -20,3 +20,6 @@ endforeach()
 if(NOT EMSCRIPTEN AND TARGET groundgrain)
   add_test(NAME window COMMAND bash ${CMAKE_SOURCE_DIR}/tests/app/window_test.sh $<TARGET_FILE:groundgrain>)
 endif()
+# How long the answers take; prints, checks nothing.
+add_executable(bench_native EXCLUDE_FROM_ALL ${CMAKE_SOURCE_DIR}/tests/bench/bench.cpp)
+target_link_libraries(bench_native PRIVATE gg_paper)

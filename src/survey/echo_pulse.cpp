@@ -110,7 +110,7 @@ void EchoPulse::measure() {
         int i = middle;
         while (i > 1 && i < table_size - 2 && std::norm(table_[i]) > 0.25) i += sense;
         const double here = std::abs(table_[i]), before = std::abs(table_[i - sense]);
-        const double back = before > here ? (0.5 - here) / (before - here) : 0.0;
+        const double back = before > here ? std::clamp((0.5 - here) / (before - here), 0.0, 1.0) : 0.0;
         return ((i - middle) * sense - back) * step_;
     };
     width = half(-1) + half(1);

@@ -6,7 +6,8 @@
 namespace gg {
 
 void Path::add(double v, double h) {
-    if (!(h > 0.0 && v > 0.0) || count == most) return;
+    // A film of less than a micrometre turns no wave aside and would only spoil the search for the ray.
+    if (!(h > 1e-6 && v > 0.0) || count == most) return;
     speed[count] = v;
     thickness[count] = h;
     ++count;

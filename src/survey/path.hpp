@@ -14,7 +14,7 @@ struct Path {
     std::array<double, most> speed{}, thickness{};  ///< m/s, m
     int count = 0;
 
-    /// Adds a layer at the bottom; one of no thickness adds nothing.
+    /// Adds a layer at the bottom; one thinner than a micrometre adds nothing.
     void add(double v, double h);
     /// One-way time straight down, s.
     double time_down() const;

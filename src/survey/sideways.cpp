@@ -108,7 +108,8 @@ void add_sideways(const Scene& scene, Answers& answers) {
     pair.first = -0.5 * gap;
     pair.dip = pair_dip(c.echo, curve, gap);
     constexpr int n = 96;
-    double peak = 0.0;
+    // The grid may step over a lone peak: the response over a target counts too.
+    double peak = pair_response(c.echo, curve, gap, 0.5 * gap);
     for (int i = 0; i <= n; ++i) {
         const double x = half * (2.0 * i / n - 1.0);
         const double left = curve.later(x + 0.5 * gap), right = curve.later(x - 0.5 * gap);
@@ -121,7 +122,7 @@ void add_sideways(const Scene& scene, Answers& answers) {
         peak = std::max(peak, pair.response.back());
     }
     for (auto* row : {&pair.response, &pair.alone_left, &pair.alone_right}) {
-        for (double& y : *row) y /= peak;
+        for (double& y : *row) y = peak > 0.0 ? y / peak : 0.0;
     }
     using Verdict = PairPicture::Verdict;
     const bool touching = gap < 2.0 * R;
