@@ -20,7 +20,7 @@ struct Pair {
     double from = 0.0, to = 1.0;     ///< m along the line
     double first = 0.0, last = 1.0;  ///< s, of the panel
     double most = 1.0;               ///< strength that fills the curve's box
-    Figure figure;
+    Figure figure{};
 
     double x(double position) const { return panel.x + (position - from) / (to - from) * panel.width; }
     double y(double time) const { return panel.y + (time - first) / (last - first) * panel.height; }

@@ -72,9 +72,6 @@ void draw_dimension(Canvas& canvas, Point from, Point to, Stroke stroke);
 /// Small filled triangle with its tip at `tip`, pointing along `direction` (any length).
 void draw_arrowhead(Canvas& canvas, Point tip, Point direction, double size, Colour colour);
 
-TextStyle normal_text(const FigureStyle& style, const Palette& colours);
-TextStyle small_text(const FigureStyle& style, const Palette& colours);
-
 /// Likely value of an answer, or `otherwise` where there is none that may be shown.
 double answer_or(const Answers& answers, std::string_view key, double otherwise);
 /// A round target as it is filled: solid metal, a pipe's wall with water or air in it, a bare void.

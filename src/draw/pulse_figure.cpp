@@ -315,7 +315,7 @@ Figure pulse_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     canvas.box(box, colours.paper);
     const double sent_width = std::min(0.34 * inner.width, 220.0);
     draw_sent(p, {inner.x, inner.y, sent_width, head});
-    canvas.text({inner.x, inner.y + head}, "sent", {colours.soft_ink, small, Across::left, Down::bottom});
+    canvas.text({inner.x, inner.y}, "sent", {colours.soft_ink, small, Across::left, Down::top});
     draw_legend(p, {inner.x + sent_width + 14, inner.y, inner.width - sent_width - 14, head});
     draw_zoom(p);
     draw_interval(p);
