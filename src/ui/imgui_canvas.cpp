@@ -1,6 +1,7 @@
 #include "ui/imgui_canvas.hpp"
 
 #include <imgui.h>
+#include <imgui_internal.h>
 
 #include <algorithm>
 #include <cmath>

@@ -8,15 +8,15 @@
 
 namespace gg {
 
+inline bool operator==(const Box& a, const Box& b) {
+    return a.x == b.x && a.y == b.y && a.width == b.width && a.height == b.height;
+}
 struct Mark {
     std::string id, role, name, value;
     Box box;            ///< css px, cut to what is visible
     bool shown = true;  ///< some of it is visible
     bool operator==(const Mark&) const = default;
 };
-inline bool operator==(const Box& a, const Box& b) {
-    return a.x == b.x && a.y == b.y && a.width == b.width && a.height == b.height;
-}
 
 /// The part of `a` inside `b`; width and height 0 where there is none.
 Box meet(Box a, Box b);
