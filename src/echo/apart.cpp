@@ -1,0 +1,261 @@
+#include "echo/apart.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+#include "wave/fourier.hpp"
+
+namespace gg {
+namespace {
+
+constexpr double reading_floor = 0.05;
+const double noise_share = 3.0 * std::sqrt(2.0);
+
+struct Span {
+    int from, to;  ///< both in it
+};
+
+/// The highest places in two spans, one after the other, and the lowest between them; all in units of a place.
+Dip dip_of(const std::vector<double>& r, Span one, Span other, double sigma) {
+    const int last = static_cast<int>(r.size()) - 1;
+    Dip dip;
+    one = {std::clamp(one.from, 0, last), std::clamp(one.to, 0, last)};
+    other = {std::clamp(other.from, 0, last), std::clamp(other.to, 0, last)};
+    if (!(one.from <= one.to && one.to <= other.from && other.from <= other.to)) return dip;
+    const auto left = std::max_element(r.begin() + one.from, r.begin() + one.to + 1);
+    const auto right = std::max_element(r.begin() + other.from, r.begin() + other.to + 1);
+    const double low = *std::min_element(left, right + 1), peak = std::min(*left, *right);
+    dip.first = static_cast<double>(left - r.begin());
+    dip.second = static_cast<double>(right - r.begin());
+    dip.lower_peak = peak;
+    if (!(peak > 0.0)) return dip;
+    dip.depth = 1.0 - low / peak;
+    dip.needed = std::max(reading_floor, noise_share * sigma / peak);
+    return dip;
+}
+
+double rms(const std::vector<double>& a) {
+    double sum = 0.0;
+    for (const double x : a) sum += x * x;
+    return a.empty() ? 0.0 : std::sqrt(sum / static_cast<double>(a.size()));
+}
+
+/// Two-way time to the top of a target straight below the antennas, s, and the pulse's half width about it.
+double time_to(const Scene& scene, double depth) {
+    const double f = scene.pulse.centre_frequency;
+    return 2.0 * ray_to(scene.ground, scene.height, 0.5 * scene.separation, depth, f).time;
+}
+double pulse_width(const Scene& scene) { return 1.0 / band_of(scene.pulse).width(); }
+
+/// Where in `envelope` the echo expected at `time` peaks.
+int peak_near(const std::vector<double>& envelope, double start, double dt, double time, double width) {
+    const int n = static_cast<int>(envelope.size());
+    const int from = std::clamp(static_cast<int>((time - width - start) / dt), 0, n - 1);
+    const int to = std::clamp(static_cast<int>(std::ceil((time + 1.5 * width - start) / dt)), from, n - 1);
+    return static_cast<int>(std::max_element(envelope.begin() + from, envelope.begin() + to + 1) - envelope.begin());
+}
+
+struct Columns {
+    int count = 0, length = 0;
+    double first = 0.0, step = 0.0;  ///< m along the line
+    double start = 0.0, dt = 0.0;    ///< of a column: s or m
+    const std::vector<double>* values = nullptr;
+
+    std::vector<double> envelope_of(int column) const {
+        return envelope(std::span<const double>(*values).subspan(static_cast<std::size_t>(column) * length,
+                                                                 static_cast<std::size_t>(length)));
+    }
+    int nearest(double x) const { return std::clamp(static_cast<int>(std::lround((x - first) / step)), 0, count - 1); }
+};
+
+Dip read(const Columns& c, double x1, double x2, double place1, double place2, double width, double sigma) {
+    const double gap = x2 - x1;
+    const int row1 = peak_near(c.envelope_of(c.nearest(x1)), c.start, c.dt, place1, width);
+    const int row2 = peak_near(c.envelope_of(c.nearest(x2)), c.start, c.dt, place2, width);
+    // A quarter of the gap about each place: nearer the middle the two flanks meet and add, a peak that is no target's.
+    const Span one{c.nearest(x1 - 0.25 * gap), c.nearest(x1 + 0.25 * gap)},
+        other{c.nearest(x2 - 0.25 * gap), c.nearest(x2 + 0.25 * gap)};
+    std::vector<double> r(static_cast<std::size_t>(c.count), 0.0);
+    for (int i = one.from; i <= other.to; ++i) {
+        const std::vector<double> e = c.envelope_of(i);
+        r[i] = *std::max_element(e.begin() + std::min(row1, row2), e.begin() + std::max(row1, row2) + 1);
+    }
+    Dip dip = dip_of(r, one, other, sigma);
+    dip.first = c.first + dip.first * c.step;
+    dip.second = c.first + dip.second * c.step;
+    return dip;
+}
+
+/// Smallest value of `size` from which on apart(size) holds, between low and high, starting from a guess. 3 %.
+template <class F>
+Value smallest(double low, double high, double guess, const F& apart) {
+    constexpr double stride = 1.35;
+    double good = 0.0, bad = 0.0;
+    for (double at = std::clamp(guess, low, high);;) {
+        if (apart(at)) {
+            good = at;
+            if (!(at > low) || bad > 0.0) break;
+            at = std::max(low, at / stride);
+        } else {
+            bad = at;
+            if (good > 0.0) break;
+            if (!(at < high)) return {0.0, Issue::no_solution};
+            at = std::min(high, at * stride);
+        }
+    }
+    while (bad > 0.0 && good > 1.03 * bad) {
+        const double at = std::sqrt(good * bad);
+        (apart(at) ? good : bad) = at;
+    }
+    return {good, Issue::none};
+}
+
+/// The scene with only what a reading needs: few traces about x, no more time than the echo at `time` and its tail.
+Scene close_look(const Scene& scene, double x, double half, double time) {
+    Scene look = scene;
+    Sampling& s = look.sampling;
+    const double dt = s.window / s.samples;
+    const int side = static_cast<int>(std::ceil(half / s.step));
+    s.first = x - side * s.step;
+    s.traces = std::min(2 * side + 1, 4096);
+    const double wanted = std::ceil((time + 4.0 * pulse_width(scene) - s.start) / dt);
+    s.samples = static_cast<int>(std::clamp(wanted, 2.0, static_cast<double>(s.samples)));
+    s.window = s.samples * dt;
+    return look;
+}
+
+double sideways_rule(const Scene& scene, double depth) {
+    const double v = effective_speed(scene.ground, depth, scene.pulse.centre_frequency).value;
+    return std::sqrt(v * depth * pulse_width(scene) / 2.0);
+}
+
+}  // namespace
+
+Dip dip_sideways(const Scene& scene, const Section& section, Reading reading) {
+    if (!section.ok() || scene.targets.size() < 2 || section.traces < 3) return {};
+    const RoundTarget& a = scene.targets[0].x <= scene.targets[1].x ? scene.targets[0] : scene.targets[1];
+    const RoundTarget& b = &a == &scene.targets[0] ? scene.targets[1] : scene.targets[0];
+    const double top_a = a.depth - a.radius, top_b = b.depth - b.radius, width = pulse_width(scene);
+    if (reading == Reading::raw) {
+        const Columns c{section.traces, section.samples, section.first,   section.step,
+                        section.start,  section.dt,      &section.targets};
+        return read(c, a.x, b.x, time_to(scene, top_a), time_to(scene, top_b), width, rms(section.noise));
+    }
+    const Image image = focused(scene, section.targets);
+    if (image.issue != Issue::none) return {};
+    // White noise through the same focusing, on the image's scale.
+    const Image noise = focused(scene, section.noise);
+    const Columns c{image.traces, image.rows, image.first, image.step, 0.0, image.spacing, &image.values};
+    const double v = effective_speed(scene.ground, a.depth, scene.pulse.centre_frequency).value;
+    const double sigma =
+        noise.issue == Issue::none && image.peak > 0.0 ? rms(noise.values) * noise.peak / image.peak : 0.0;
+    return read(c, a.x, b.x, top_a, top_b, 0.5 * v * width, sigma);
+}
+
+Dip dip_down(const std::vector<double>& trace, double dt, double early, double late, double sigma) {
+    if (trace.size() < 3 || !(dt > 0.0 && early < late)) return {};
+    const std::vector<double> e = envelope(trace);
+    const double half = 0.5 * (late - early);
+    const auto place = [&](double time) {
+        return static_cast<int>(std::lround(std::clamp(time / dt, -1.0, static_cast<double>(e.size()))));
+    };
+    Dip dip = dip_of(e, {place(early - half), place(early + half)}, {place(early + half), place(late + half)}, sigma);
+    dip.first *= dt;
+    dip.second *= dt;
+    return dip;
+}
+
+Dip dip_downwards(const Scene& scene, const Section& section) {
+    if (!section.ok() || scene.targets.empty()) return {};
+    const RoundTarget* upper = &scene.targets[0];
+    const RoundTarget* lower = upper;
+    double late = 0.0;
+    if (scene.targets.size() > 1) {
+        lower = &scene.targets[1];
+        if (lower->depth < upper->depth) std::swap(upper, lower);
+        late = time_to(scene, lower->depth - lower->radius);
+    } else {
+        // Through the wall and the filling to the bottom and back.
+        const double f = scene.pulse.centre_frequency, wall = upper->wall ? upper->wall->thickness : 0.0;
+        late = time_to(scene, upper->depth - upper->radius);
+        if (upper->inside.model != Model::metal)
+            late += 4.0 * (upper->radius - wall) / plane_wave(upper->inside, f).speed;
+        if (upper->wall) late += 2.0 * wall / plane_wave(upper->wall->material, f).speed;
+    }
+    const int column =
+        std::clamp(static_cast<int>(std::lround((upper->x - section.first) / section.step)), 0, section.traces - 1);
+    const auto from = section.targets.begin() + static_cast<std::ptrdiff_t>(column) * section.samples;
+    return dip_down({from, from + section.samples}, section.dt,
+                    time_to(scene, upper->depth - upper->radius) - section.start, late - section.start,
+                    rms(section.noise));
+}
+
+Value smallest_gap(const Scene& scene, Reading reading) {
+    if (scene.targets.size() < 2 || !fault_of(scene).empty()) return {0.0, Issue::out_of_range};
+    Scene pair = scene;
+    pair.targets.resize(2);
+    RoundTarget &a = pair.targets[0], &b = pair.targets[1];
+    const double middle = 0.5 * (a.x + b.x), rule = sideways_rule(scene, std::max(a.depth, b.depth));
+    const double drop = a.depth - b.depth, touch = a.radius + b.radius;
+    const double low =
+        std::max({std::sqrt(std::max(0.0, touch * touch - drop * drop)) * 1.01, 1e-3 * rule, 1.01 * 1e-4});
+    const auto apart = [&](double gap) {
+        a.x = middle - 0.5 * gap;
+        b.x = middle + 0.5 * gap;
+        const double depth = std::max(a.depth, b.depth),
+                     aperture = reading == Reading::raw ? gap : 0.5 * gap + 1.2 * depth;
+        const double far = std::hypot(aperture, depth) / depth;
+        const Scene look =
+            close_look(pair, middle, aperture, time_to(pair, depth) * (reading == Reading::raw ? 1.0 : far));
+        return dip_sideways(look, section_of(look), reading).apart();
+    };
+    return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule, apart);
+}
+
+Value smallest_drop(const Scene& scene) {
+    if (scene.targets.size() < 2 || !fault_of(scene).empty()) return {0.0, Issue::out_of_range};
+    Scene pair = scene;
+    pair.targets.resize(2);
+    if (pair.targets[1].depth < pair.targets[0].depth) std::swap(pair.targets[0], pair.targets[1]);
+    RoundTarget &a = pair.targets[0], &b = pair.targets[1];
+    b.x = a.x;
+    const int layer = layer_at(scene.ground, a.depth);
+    const bool last = layer + 1 == static_cast<int>(scene.ground.slabs.size());
+    const double v = plane_wave(scene.ground.slabs[layer].material, scene.pulse.centre_frequency).speed,
+                 width = pulse_width(scene);
+    const double bottom =
+        last ? a.depth + 12.0 * v * width : top_of(scene.ground, layer) + scene.ground.slabs[layer].thickness;
+    const double low = 1.01 * (a.radius + b.radius), high = bottom - b.radius - a.depth - 1e-6;
+    if (!(high > low)) return {0.0, Issue::no_solution};
+    const auto apart = [&](double drop) {
+        b.depth = a.depth + drop;
+        const Scene look = close_look(pair, a.x, 0.0, scene.sampling.start + scene.sampling.window);
+        return dip_downwards(look, section_of(look)).apart();
+    };
+    return smallest(low, high, a.radius + b.radius + 0.5 * v * width, apart);
+}
+
+Value smallest_diameter(const Scene& scene) {
+    if (scene.targets.empty() || !fault_of(scene).empty()) return {0.0, Issue::out_of_range};
+    Scene one = scene;
+    one.targets.resize(1);
+    RoundTarget& t = one.targets[0];
+    if (t.inside.model == Model::metal) return {0.0, Issue::no_solution};
+    const int layer = layer_at(scene.ground, t.depth);
+    const bool last = layer + 1 == static_cast<int>(scene.ground.slabs.size());
+    const double top = t.depth - t.radius, wall = t.wall ? t.wall->thickness : 0.0;
+    const double v = plane_wave(t.inside, scene.pulse.centre_frequency).speed, width = pulse_width(scene);
+    const double room = last ? 20.0 : top_of(scene.ground, layer) + scene.ground.slabs[layer].thickness - top - 1e-6;
+    const double low = std::max(2.1 * wall, 0.1 * v * width),
+                 high = std::min({room, 19.9, 2.0 * wall + 6.0 * v * width});
+    if (!(high > low)) return {0.0, Issue::no_solution};
+    const auto apart = [&](double diameter) {
+        t.radius = 0.5 * diameter;
+        t.depth = top + t.radius;
+        const Scene look = close_look(one, t.x, 0.0, scene.sampling.start + scene.sampling.window);
+        return dip_downwards(look, section_of(look)).apart();
+    };
+    return smallest(low, high, 2.0 * wall + 0.5 * v * width, apart);
+}
+
+}  // namespace gg
