@@ -23,6 +23,12 @@ std::string shown(const Json& value) {
     return text;
 }
 
+std::string in_quotes(std::string_view words) {
+    std::string text(1, '"');
+    text += words;
+    return text += '"';
+}
+
 std::string digits(double x) { return Json(x).dump(); }
 
 class Reader {
@@ -96,7 +102,7 @@ class Reader {
         known_.insert("schema");
         words("name", plan().name);
         words("note", plan().note);
-        if (!root_.contains("name")) note("name is missing: \"" + plan().name + "\" is taken.");
+        if (!root_.contains("name")) note("name is missing: " + in_quotes(plan().name) + " is taken.");
         for (const char* section : {"target", "antenna", "pass", "lanes", "need"}) {
             known_.insert(section);
             if (!root_.contains(section))
@@ -147,7 +153,7 @@ class Reader {
             const std::string key = choices_of(plan())[i].key;
             const Json* found = at(key);
             if (!found)
-                missing(key, "\"" + choice_at(plan(), key).value_or("") + "\"");
+                missing(key, in_quotes(choice_at(plan(), key).value_or("")));
             else if (!found->is_string())
                 fault(key + " is " + shown(*found) + "; it must be a name in quotes.");
             else if (std::string wrong = set_choice(plan(), key, found->get<std::string>()); !wrong.empty())
@@ -244,7 +250,7 @@ class Reader {
         for (const auto& [name, value] : group.items()) {
             const std::string key = prefix + name;
             if (!known_.count(key))
-                note("\"" + key.substr(0, 60) + "\" is no key that this plan uses: it is passed over.");
+                note(in_quotes(key.substr(0, 60)) + " is no key that this plan uses: it is passed over.");
             else if (value.is_object() || (key == "ground" && value.is_array()))
                 walk(value, key + ".");
         }
