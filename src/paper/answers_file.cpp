@@ -9,8 +9,6 @@ namespace {
 
 constexpr int answers_schema = 1;
 
-std::string said(const std::string& words) { return spell(words, UnitSystem::metric); }
-
 const char* name_of(Group group) {
     switch (group) {
         case Group::wave:
@@ -33,7 +31,16 @@ const char* name_of(Group group) {
     return "";
 }
 
-Json one(const Answer& answer) {
+/// The value as a person would say it, with its range where there is one; the reason where there is none.
+std::string says(const Answer& answer, UnitSystem units) {
+    if (!answer.likely.ok()) return std::string(sentence(answer.likely.issue));
+    const auto words = [&](double value) { return say(value, answer.quantity, units); };
+    const std::string likely = words(answer.likely.value), low = words(answer.low), high = words(answer.high);
+    return low == high ? likely : likely + " (" + low + " to " + high + ")";
+}
+
+Json one(const Answer& answer, UnitSystem units) {
+    const auto said = [units](const std::string& words) { return spell(words, units); };
     Json json;
     json["key"] = answer.key;
     json["name"] = answer.name;
@@ -43,6 +50,7 @@ Json one(const Answer& answer) {
     json["value"] = ok ? Json(answer.likely.value) : Json();
     json["low"] = ok ? Json(answer.low) : Json();
     json["high"] = ok ? Json(answer.high) : Json();
+    json["says"] = says(answer, units);
     if (answer.likely.issue != Issue::none) json["issue"] = sentence(answer.likely.issue);
     if (answer.grade != Grade::none) json["grade"] = word_for(answer.grade);
     json["why"] = said(answer.why);
@@ -58,15 +66,15 @@ Json one(const Answer& answer) {
 
 }  // namespace
 
-std::string write_answers(const Plan& plan, const Answers& answers) {
+std::string write_answers(const Plan& plan, const Answers& answers, UnitSystem units) {
     Json root;
     root["schema"] = answers_schema;
     root["plan"] = plan.name;
     root["caution"] = caution();
     root["faults"] = Json::array();
-    for (const std::string& fault : answers.faults) root["faults"].push_back(said(fault));
+    for (const std::string& fault : answers.faults) root["faults"].push_back(spell(fault, units));
     root["answers"] = Json::array();
-    for (const Answer& answer : answers.list) root["answers"].push_back(one(answer));
+    for (const Answer& answer : answers.list) root["answers"].push_back(one(answer, units));
     return root.dump(2, ' ', false, Json::error_handler_t::replace) + "\n";
 }
 

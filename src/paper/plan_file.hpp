@@ -4,6 +4,7 @@
 #include <string_view>
 #include <vector>
 
+#include "draw/units.hpp"
 #include "survey/plan.hpp"
 
 namespace gg {
@@ -28,8 +29,9 @@ struct Demo {
 };
 const std::vector<Demo>& demos();
 
-/// Answers as JSON: schema, plan name, list of answers with SI values and units, faults, caution.
-std::string write_answers(const Plan& plan, const struct Answers& answers);
+/// Answers as JSON: schema, plan name, list of answers with SI values and units, faults, caution. Its sentences (and
+/// "says", the value in words) are in `units`.
+std::string write_answers(const Plan& plan, const struct Answers& answers, UnitSystem units = UnitSystem::metric);
 
 /// The caution that stands on every output.
 std::string_view caution();

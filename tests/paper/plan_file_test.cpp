@@ -219,6 +219,11 @@ TEST_CASE("answers are written whole: every answer with its value in SI, a reaso
             // Numbers inside sentences are spelt out, not left as tokens.
             CHECK(written["why"].get<std::string>().find('{') == std::string::npos);
             CHECK(written["rules"].size() == answer.rules.size());
+            if (answer.likely.ok())
+                CHECK(written["says"].get<std::string>().rfind(
+                          say(answer.likely.value, answer.quantity, UnitSystem::metric), 0) == 0);
+            else
+                CHECK(written["says"] == std::string(sentence(answer.likely.issue)));
         }
     }
     CHECK(caution().find("cannot prove that nothing is there") != std::string_view::npos);
