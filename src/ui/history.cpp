@@ -2,11 +2,15 @@
 
 #include <algorithm>
 #include <limits>
+#include <utility>
 
 namespace gg {
 
 static constexpr double still = 1.0;         // s
 static constexpr std::size_t longest = 200;  // plans; one is a few kilobytes
+
+History::History() : kept_(1), seen_(kept_.front()) {}
+History::History(Plan first) : kept_(1, std::move(first)), seen_(kept_.front()) {}
 
 void History::watch(const Plan& plan, double now, bool busy) {
     if (!(plan == seen_) || busy) {

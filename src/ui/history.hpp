@@ -9,7 +9,8 @@ namespace gg {
 
 class History {
   public:
-    explicit History(Plan first = {}) : kept_{std::move(first)}, seen_(kept_.front()) {}
+    History();
+    explicit History(Plan first);
 
     /// Looks at the plan as it is at time `now` (s). While `busy` (a drag or a held button) nothing is kept.
     void watch(const Plan& plan, double now, bool busy);

@@ -42,9 +42,9 @@ static void type(Edit& edit, std::string_view key) {
         if (!edit.text.empty()) edit.text.pop_back();
     } else if (key == "sign") {
         if (!edit.text.empty() && edit.text[0] == '-')
-            edit.text.erase(0, 1);
+            edit.text.erase(edit.text.begin());
         else
-            edit.text.insert(0, "-");
+            edit.text.insert(edit.text.begin(), '-');
     } else {
         if (edit.fresh) edit.text.clear();
         const bool second_point = key == "." && edit.text.find_first_of(".,") != std::string::npos;

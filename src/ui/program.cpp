@@ -6,6 +6,7 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
+#include <utility>
 
 #include "paper/plan_file.hpp"
 #include "ui/parts.hpp"
@@ -417,7 +418,7 @@ std::vector<Request> Program::take_requests() { return std::exchange(state_->ses
 
 const Plan& Program::plan() const { return state_->session.plan; }
 std::string Program::plan_json() const { return write_plan(state_->session.plan); }
-std::string Program::answers_json() const { return write_answers(state_->session.plan, state_->session.answers); }
+std::string Program::answers_json() const { return write_answers(state_->session.plan, state_->session.answers, state_->session.units()); }
 std::string Program::controls_json() const { return marks_json(state_->marks); }
 
 }  // namespace gg

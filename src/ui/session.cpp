@@ -59,8 +59,8 @@ void Session::open(Plan next, std::string text) {
 std::string Session::open_text(std::string_view json, std::string_view name) {
     ReadPlan read = read_plan(json);
     if (!read.ok()) return std::string(name) + ": " + read.faults.front();
-    std::string text = "Opened \"" + read.plan.name + "\"";
-    if (!read.notes.empty()) text += ". " + read.notes.front();
+    std::string text = "Opened: " + read.plan.name;
+    if (!read.notes.empty()) text.append(". ").append(read.notes.front());
     open(std::move(read.plan), std::move(text));
     return {};
 }
@@ -112,7 +112,7 @@ bool Session::commit_edit() {
     if (!field) return edit = {}, true;
     if (edit.fresh) return true;  // untouched
     const auto value = read_number(edit.text, field->quantity, units());
-    edit.fault = value ? words(set(edit.key, *value)) : "\"" + edit.text + "\" is no number.";
+    edit.fault = value ? words(set(edit.key, *value)) : edit.text + " is no number.";
     if (!edit.fault.empty()) {
         requests.push_back({Request::Kind::announce, "fault", edit.fault});
         return false;
