@@ -17,7 +17,6 @@ namespace gg {
 
 static constexpr int frames_after_input = 3;  // ImGui settles hover, press and release within this many
 static constexpr double store_after = 0.3;    // s a plan is still before it is kept on the device
-static constexpr double infinity = std::numeric_limits<double>::infinity();
 
 struct Program::State final : PointerOut {
     std::string_view font;
@@ -418,7 +417,9 @@ std::vector<Request> Program::take_requests() { return std::exchange(state_->ses
 
 const Plan& Program::plan() const { return state_->session.plan; }
 std::string Program::plan_json() const { return write_plan(state_->session.plan); }
-std::string Program::answers_json() const { return write_answers(state_->session.plan, state_->session.answers, state_->session.units()); }
+std::string Program::answers_json() const {
+    return write_answers(state_->session.plan, state_->session.answers, state_->session.units());
+}
 std::string Program::controls_json() const { return marks_json(state_->marks); }
 
 }  // namespace gg
