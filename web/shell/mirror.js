@@ -91,7 +91,7 @@ export function makeMirror(program, heard) {
             ...answers.answers.map((answer) => {
                 const row = document.createElement('tr');
                 row.dataset.key = answer.key;
-                for (const [tag, text] of [['th', answer.name], ['td', answer.says], ['td', answer.grade], ['td', answer.why]]) {
+                for (const [tag, text] of [['th', answer.name], ['td', answer.says], ['td', answer.grade ?? ''], ['td', answer.why]]) {
                     const cell = document.createElement(tag);
                     if (tag === 'th') cell.scope = 'row';
                     cell.textContent = text;
