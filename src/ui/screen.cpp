@@ -131,7 +131,7 @@ void Screen::label(Box box, std::string_view words, Line how) {
     const double size = how.size > 0 ? how.size : text;
     if (width_of(words, size) <= box.width) return line(box, words, how);
     std::vector<std::string> lines = lines_of(words, box.width, size);
-    if (lines.size() == 1) return line(box, words, how);
+    if (lines.size() < 2) return line(box, words, how);
     const double step = std::min(std::round(size * 1.2), box.height / 2);
     std::string rest;
     for (std::size_t i = 1; i < lines.size(); ++i) rest += (i > 1 ? " " : "") + lines[i];
