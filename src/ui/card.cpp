@@ -14,10 +14,9 @@ static double bars(Screen& s, const Answer& answer, double x, double y, double w
     const double line = std::round(s.text * 1.4), bar = 8;
     const auto row = [&](std::string_view name, double value, bool own, std::string_view source) {
         const double number = s.width_of(say(value, answer.quantity, s.session.units()), s.text) + 6;
-        s.line({x, y, width - number - 8, line}, name, {s.text, s.colours.ink, Across::left, own});
         s.line({x + width - number, y, number, line}, say(value, answer.quantity, s.session.units()),
                {s.text, s.colours.ink, Across::right, own});
-        y += line + 2;
+        y = s.paragraph(x, y, width - number - 8, name, {s.text, s.colours.ink, Across::left, own}) + 2;
         s.canvas().box({x, y, width, bar}, s.colours.panel, 4);
         s.canvas().box({x, y, std::max(3.0, width * std::clamp(value / most, 0.0, 1.0)), bar},
                        own ? s.colours.wave : s.colours.soft_ink, 4);

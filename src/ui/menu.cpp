@@ -45,7 +45,7 @@ static int segments(Screen& s, const std::string& id, std::string_view label, co
 
 void menu_ui(Screen& s) {
     Session& session = s.session;
-    const Box box = sheet_frame(s, "Menu", 14 * s.areas.row + 60);
+    const Box box = sheet_frame(s, "Menu", 11 * s.areas.row + 70);
     const double x = box.x, width = box.width, row = s.areas.row;
     double y = s.begin_scroll("menu", {box.x - 8, box.y, box.width + 16, box.height}) + 4;
     const auto act = [&](const char* id, const char* name) {

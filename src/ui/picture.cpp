@@ -126,7 +126,7 @@ void tabs_ui(Screen& s) {
     s.canvas().box(area, s.colours.paper, 0);
     const bool desk = s.areas.kind == Areas::Kind::desktop;
     const double count = static_cast<double>(views().size());
-    const double width = desk ? std::min(110.0 * s.text / 15, area.width / count) : area.width / count;
+    const double width = desk ? std::min(92.0 * s.text / 15, area.width / count) : area.width / count;
     double x = area.x + (desk ? 8 : 0);
     for (const ViewRow& row : views()) {
         const bool chosen = row.view == s.session.view.view;

@@ -158,7 +158,7 @@ Hit Screen::control(const std::string& id, const char* role, std::string_view na
     if (!ImGui::ItemAdd(rect, key)) return hit;
     const bool tapped =
         ImGui::ButtonBehavior(rect, key, &hit.hovered, &hit.held, repeats ? ImGuiButtonFlags_Repeat : 0);
-    if (tapped) session.view.focus = id;
+    if (tapped && std::string_view(role) != "img") session.view.focus = id;
     hit.pressed |= tapped;
     return hit;
 }
@@ -194,7 +194,8 @@ bool Screen::button(const std::string& id, std::string_view words, Box box, Look
     const Colour colour = look == Look::strong                        ? colours.paper
                           : look == Look::quiet || look == Look::bare ? colours.wave
                                                                       : colours.ink;
-    line({box.x + 8, box.y, box.width - 16, box.height}, words, {text, colour, Across::centre, look == Look::strong});
+    const double size = words.size() <= 2 ? large : text;  // keys of the keypad
+    line({box.x + 8, box.y, box.width - 16, box.height}, words, {size, colour, Across::centre, look == Look::strong});
     return hit.pressed;
 }
 
