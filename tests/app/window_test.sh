@@ -10,7 +10,7 @@ on_screen() { timeout 120 xvfb-run -a -s "-screen 0 1600x1200x24" "$program" "$@
 fail() { echo "FAILED: $*" >&2; exit 1; }
 
 # Number of different colours in a PPM, and its size: a blank window has one.
-colours() { tail -c +16 "$1" | od -An -v -tx1 -w3 | sort | uniq | wc -l; }
+colours() { tail -c +16 "$1" | od -An -v -tx1 -w3 | LC_ALL=C sort -u | wc -l; }
 size() { head -c 15 "$1" | sed -n 2p; }
 
 on_screen --shot "$here/first.ppm" --size 1280x800 || fail "the window did not close with 0"
