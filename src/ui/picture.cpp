@@ -38,7 +38,7 @@ static void hint_ui(Screen& s, Grip& grip) {
         return;
     }
     if (grip.figure.handles.empty()) return;
-    const std::string words = "Drag a round grip: everything follows";
+    const std::string words = s.areas.picture.width < 520 ? "Drag a grip" : "Drag a round grip: everything follows";
     const double width = std::min(s.areas.picture.width - 16, s.width_of(words, s.small) + 28),
                  height = 32 * s.text / 16;
     const Box pill{s.areas.picture.x + (s.areas.picture.width - width) / 2, s.areas.picture.bottom() - height - 10,
