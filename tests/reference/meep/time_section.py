@@ -2,8 +2,8 @@
     /usr/bin/python3 tests/reference/meep/time_section.py [--error]
 The solver needs a run for every antenna position, and one without targets. Timed are some steps of one run (each costs the
 same), at the position whose distance from the line's middle is the mean over the line, in a box no wider than that position
-needs. Cells are a third of "cell": two thirds of it would leave an error of 9 % RMS of a trace, this 2 %, as --error finds from
-two coarser grids (some minutes). Times are of the processor, so that other work on the machine does not count; the solver uses one core.
+needs. Cells are a third of "cell", which leaves about 2 % RMS of a trace; --error (some minutes) finds that error anew, from two
+coarser grids. Times are of the processor, so that other work on the machine does not count; the solver uses one core.
 The last line is the number of seconds per section.
 """
 
