@@ -122,13 +122,7 @@ test('the plan survives a reload, and a tab that is killed', async () => {
 test('the system asking for dark gives a dark picture, and light a light one', async () => {
     const brightness = async (colorScheme) => {
         const visit = await Visit.open(browser, 'phone', { colorScheme });
-        const shot = await visit.page.screenshot();
-        const mean = await visit.page.evaluate(async (base64) => {
-            const image = await createImageBitmap(await (await fetch(`data:image/png;base64,${base64}`)).blob());
-            const context = new OffscreenCanvas(1, 1).getContext('2d');
-            context.drawImage(image, 0, 0, 1, 1);
-            return context.getImageData(0, 0, 1, 1).data[1];
-        }, shot.toString('base64')).catch((reason) => reason);
+        const mean = await visit.brightness();
         quiet(visit);
         // Follows the system while the page is open, too.
         const frames = await visit.frames();
