@@ -80,8 +80,8 @@ void picture_ui(Screen& s, Grip& grip, Point pointer) {
             session.view.focus = "handle." + near->field;
         }
     }
-    if (!grip.field.empty() && down && std::hypot(pointer.x - grip.from.x, pointer.y - grip.from.y) > 0.5 &&
-        pointer.x > -1e5) {
+    // Also in the frame of the release: where frames are slow, a whole drag may have come in since the last one.
+    if (!grip.field.empty() && std::hypot(pointer.x - grip.from.x, pointer.y - grip.from.y) > 0.5 && pointer.x > -1e5) {
         drag(session, grip, pointer);
         if (!session.preferences.hint_seen) {
             session.preferences.hint_seen = true;
