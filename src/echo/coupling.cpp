@@ -21,24 +21,25 @@ struct ByBoundaries {
     int reach;
     std::vector<Cx> odd, even;
 
-    ByBoundaries(const Scatterer& q, const Scatterer& p, const Host& host, const Spectra& spectra, int count)
+    ByBoundaries(const Scatterer& q, const Scatterer& p, const Host& host, const Spectra& spectra, int count,
+                 int stride)
         : reach(q.order() + p.order()), odd(2 * static_cast<std::size_t>(reach) + 1), even(odd.size()) {
-        const double x = q.x - p.x, scale = spectra.spacing / pi;
+        const double x = q.x - p.x, scale = stride * spectra.spacing / pi;
         const Cx inverse_k = Cx{1.0} / spectra.k;
         Cx* const odd0 = odd.data() + reach;
         Cx* const even0 = even.data() + reach;
-        for (std::size_t at = 0; at < static_cast<std::size_t>(count); ++at) {
+        for (std::size_t at = 0; at < static_cast<std::size_t>(count); at += static_cast<std::size_t>(stride)) {
             const double kx = static_cast<double>(at) * spectra.spacing;
             const Cx kz = spectra.kz[at], U = spectra.above[at];
             const Cx front = (scale * (at == 0 ? 0.5 : 1.0)) * (Cx{1.0} / kz);  // +kx and -kx are one point at 0
-            Cx up = front * U * travel(kz, p.above + q.above), down, up_down, down_up;
+            Cx up = front * U * p.to_top[at] * q.to_top[at], down, up_down, down_up;
             if (!host.endless()) {
                 const Cx D = spectra.below[at], e = spectra.pass[at];
                 const Cx round = Cx{1.0} / (Cx{1.0} - U * D * e * e), both = front * U * D * e * round;
                 up = up * round;
-                down = front * D * round * travel(kz, p.below + q.below);
-                down_up = both * travel(kz, p.below + q.above);
-                up_down = both * travel(kz, p.above + q.below);
+                down = front * D * round * p.to_bottom[at] * q.to_bottom[at];
+                down_up = both * p.to_bottom[at] * q.to_top[at];
+                up_down = both * p.to_top[at] * q.to_bottom[at];
             }
             const Cx phase{std::cos(kx * x), -std::sin(kx * x)};
             // E = exp(j phi) = (kx + j kz)/k and its inverse; at -kx they change places and sign.
@@ -64,8 +65,8 @@ struct ByBoundaries {
 
 /// Fills the block of C that leads from p to q, and by reciprocity the one that leads back.
 void fill(Matrix& C, int row, int column, const Scatterer& q, const Scatterer& p, const Host& host,
-          const Spectra& spectra, int count) {
-    const ByBoundaries by(q, p, host, spectra, count);
+          const Spectra& spectra, int count, int stride) {
+    const ByBoundaries by(q, p, host, spectra, count, stride);
     const bool same = row == column;
     const double dx = q.x - p.x, dz = q.above - p.above, d = std::hypot(dx, dz);
     const int reach = q.order() + p.order();
@@ -93,7 +94,7 @@ void fill(Matrix& C, int row, int column, const Scatterer& q, const Scatterer& p
 }  // namespace
 
 std::vector<Complex> joint_answer(const std::vector<Scatterer>& targets, const Host& host, const Spectra& spectra,
-                                  int count) {
+                                  int count, int stride) {
     int size = 0;
     for (const Scatterer& target : targets) size += target.size();
     Matrix C(size, size);
@@ -101,7 +102,7 @@ std::vector<Complex> joint_answer(const std::vector<Scatterer>& targets, const H
     for (std::size_t q = 0; q < targets.size(); row += targets[q++].size()) {
         int column = 0;
         for (std::size_t p = 0; p <= q; column += targets[p++].size())
-            fill(C, row, column, targets[q], targets[p], host, spectra, count);
+            fill(C, row, column, targets[q], targets[p], host, spectra, count, stride);
     }
     const Matrix T = (Matrix::Identity(size, size) - C).partialPivLu().inverse();
     return {T.data(), T.data() + T.size()};

@@ -62,16 +62,20 @@ Complex direct_wave(const Media& media, double separation, double height, Polari
                       r = (kz0 - g1) / (kz0 + g1);
         return (along ? r / kz0 : kz0 * r - far * kz0 - next / kz0) * std::exp(-i1 * kz0 * D);
     };
-    const auto piece = [&](double a, double b) {
-        const int count = 1 + static_cast<int>((b - a) * rho / 10.0);
+    const auto piece = [&](Complex from, Complex to) {
+        const Complex length = to - from;
+        if (!(std::abs(length) > 1e-9 * std::abs(k0))) return Complex{};
+        const int count = 1 + static_cast<int>(std::abs(length) * rho / 10.0);
         return panels(rule, 0.0, 0.5 * pi, count, [&](double angle) {
-            const double sine = std::sin(angle), kx = a + (b - a) * sine * sine;
-            return (b - a) * std::sin(2.0 * angle) * 2.0 * std::cos(kx * s) * f(kx);
+            const double sine = std::sin(angle);
+            const Complex kx = from + sine * sine * length;
+            return length * std::sin(2.0 * angle) * 2.0 * std::cos(kx * s) * f(kx);
         });
     };
-    const double a = std::min(k0.real(), k1.real()), b = std::max(k0.real(), k1.real());
+    // In straight lines by way of the branch points themselves: air's is the nearer one, ground's lies right of and
+    // below it.
     double from = 2.0 * std::max(std::abs(k0), std::abs(k1));
-    Complex sum = piece(0.0, a) + piece(a, b) + piece(b, from);
+    Complex sum = piece(0.0, k0) + piece(k0, k1) + piece(k1, from);
     if (D > s) {
         for (const double end = from + 30.0 / D; from < end; from *= 1.5) sum += piece(from, 1.5 * from);
     } else {

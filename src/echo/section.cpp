@@ -1,5 +1,5 @@
 /// How the section is computed, per frequency w - j delta of a grid that spans one period T:
-///   source spectrum through the layers (spectra) -> incident coefficients on a ring of positions (ring) -> joint
+///   source spectrum through the layers (spectra) -> incident coefficients on a grid of positions (grid) -> joint
 ///   answer of all targets (coupling) -> echo by reciprocity -> traces; then one inverse transform per trace and
 ///   exp(+delta t) undone.
 /// What sets the accuracy: the small negative imaginary part of the frequency damps what comes after T, which would
@@ -11,9 +11,10 @@
 
 #include "echo/cylinder_functions.hpp"
 #include "echo/direct.hpp"
+#include "echo/grid.hpp"
 #include "echo/noise.hpp"
-#include "echo/ring.hpp"
 #include "echo/scene.hpp"
+#include "echo/transform.hpp"
 
 namespace gg {
 namespace {
@@ -113,6 +114,14 @@ double way_round(const Scene& scene, double care, double period) {
         {fastest * period, 0.5 * fastest * period + farthest, farthest + care * air_share * speed_of_light * period});
 }
 
+/// The same for the paths between targets, which are weak already: half of it suffices.
+double way_between(const Scene& scene, double care, double period) {
+    double fastest = 0.0, apart = 0.0;
+    for (const double speed : speeds(scene.ground, scene.pulse.centre_frequency)) fastest = std::max(fastest, speed);
+    for (const RoundTarget& t : scene.targets) apart = std::max(apart, std::fabs(t.x - scene.targets[0].x));
+    return 2.0 * apart + care * 0.5 * std::max(fastest, air_share * speed_of_light) * period;
+}
+
 struct Tone {
     Complex w;
     double loudness;  ///< of the pulse's spectrum here, of its peak
@@ -128,6 +137,9 @@ class Engine {
           delta_(damping / period_.length()) {
         const Sampling& s = scene.sampling;
         line_ = {s.first, s.step, s.traces, scene.separation, way_round(scene, care, period_.length())};
+        stride_ = std::max(1, static_cast<int>(line_.period / way_between(scene, care, period_.length())));
+        for (int i = 0; i < s.samples; ++i)
+            gain_.push_back(std::exp(delta_ * (i + period_.lead) * period_.dt) / period_.length());
         bins_ = static_cast<std::size_t>(period_.size) / 2 + 1;
         field_.resize((static_cast<std::size_t>(s.traces) + 2) * bins_);
     }
@@ -149,10 +161,7 @@ class Engine {
         std::vector<double> t(static_cast<std::size_t>(period_.size));
         transform_.sum_real(field_.data() + row * bins_, t.data(), period_.size);
         std::vector<double> out(static_cast<std::size_t>(scene_.sampling.samples));
-        for (std::size_t i = 0; i < out.size(); ++i) {
-            const double time = (static_cast<double>(i) + period_.lead) * period_.dt;
-            out[i] = t[i + static_cast<std::size_t>(period_.lead)] * std::exp(delta_ * time) / period_.length();
-        }
+        for (std::size_t i = 0; i < out.size(); ++i) out[i] = gain_[i] * t[i + static_cast<std::size_t>(period_.lead)];
         return out;
     }
     std::size_t layers_row() const { return static_cast<std::size_t>(scene_.sampling.traces); }
@@ -191,14 +200,20 @@ class Engine {
             targets.push_back(std::move(s));
         }
         const double widest = std::hypot(k_host, reach_in);
-        const Ring ring = ring_for(line_, widest);
-        const double dk = 2.0 * pi / (ring.size * ring.spacing);
+        const Grid grid = grid_for(line_, widest);
+        const double dk = 2.0 * pi / line_.period;
         const int count_in = static_cast<int>(widest / dk) + 2;
         const int count_between = static_cast<int>(std::hypot(k_host, reach_between) / dk) + 2;
         const int count = targets.empty() ? 0 : std::max(count_in, count_between);
         Spectra spectra;
         if (count > 0) spectra = spectra_of(media, scene_.ground, host_, scene_.height, scene_.polarisation, dk, count);
 
+        for (Scatterer& target : targets) {
+            for (const Cx kz : spectra.kz) {
+                target.to_top.push_back(travel(kz, target.above));
+                if (!host_.endless()) target.to_bottom.push_back(travel(kz, target.below));
+            }
+        }
         const Complex source =
             source_spectrum(scene_.pulse, tone.w) * std::exp(Complex{0.0, 1.0} * tone.w * period_.start);
         // Folding: bin k and its mirror image in the half spectrum.
@@ -214,11 +229,10 @@ class Engine {
             const Complex constant =
                 along ? -4.0 / (tone.w * vacuum_permeability)
                       : 4.0 / (tone.w * vacuum_permittivity * media.ground[host_.layer].permittivity);
-            const std::vector<Complex> joint = joint_answer(targets, host_, spectra, count_between);
-            const std::vector<Complex> echo =
-                echo_on(ring, line_, targets, host_, spectra, count_in, joint, transform_);
+            const std::vector<Complex> joint = joint_answer(targets, host_, spectra, count_between, stride_);
+            const std::vector<Complex> echo = echo_on(grid, line_, targets, host_, spectra, count_in, joint, share);
             std::vector<Complex> traces(static_cast<std::size_t>(line_.traces));
-            onto_traces(ring, line_, echo, constant, traces.data(), 1);
+            onto_traces(grid, line_, echo, constant, traces.data(), 1);
             for (std::size_t i = 0; i < traces.size(); ++i) put(i, traces[i]);
         }
         if (scene_.ground.slabs.size() > 1) put(layers_row(), layers_echo(media, fall));
@@ -251,7 +265,9 @@ class Engine {
     Period period_;
     Host host_;
     double delta_;
+    std::vector<double> gain_;  ///< undoes the damping, sample by sample
     Line line_;
+    int stride_ = 1;  ///< of kx, for the paths between targets, which need no room for the line
     std::size_t bins_ = 0;
     Transform transform_;
     std::vector<Complex> field_;  ///< rows of half spectra: traces, then layers, then direct
