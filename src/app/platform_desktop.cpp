@@ -66,6 +66,7 @@ class Window {
         remember();
         if (plan) program_->opened(Path(options_.plan_file).filename().string(), *plan);
 
+        playing_ = !options_.script_file.empty() || !options_.shot_file.empty();
         settle();
         for (const Script::Act& act : script.acts) {
             play(act, pointer_, *program_);
@@ -75,6 +76,8 @@ class Window {
             settle();
             return shoot() ? 0 : complain("Cannot write " + options_.shot_file + ".");
         }
+        if (playing_) ahead_ -= glfwGetTime();
+        playing_ = false;
         while (!glfwWindowShouldClose(window_)) turn();
         settle();  // what was still to be kept is kept
         return 0;
@@ -178,7 +181,8 @@ class Window {
 
     /// One round of the loop: sleeps until something happens or is due, then draws.
     void turn() {
-        const double wake = dialog_.open() ? std::min(0.1, program_->wake_after()) : program_->wake_after();
+        const double due = program_->wake_after();
+        const double wake = dialog_.open() ? std::min(0.1, due) : due;
         if (stirred_ || !(wake > 0))
             glfwPollEvents();
         else if (std::isfinite(wake))
@@ -186,17 +190,20 @@ class Window {
         else
             glfwWaitEvents();
         if (const auto chosen = dialog_.finished()) take(*chosen);
-        if (stirred_ || program_->wake_after() <= 0 || std::isfinite(wake)) frame();
+        if (stirred_ || std::isfinite(due)) frame();
     }
 
-    /// Frames until nothing moves; at most five seconds' worth, for motion that never rests.
+    /// s, never going back. While a script plays, time is as long as its frames: every run is then the same.
+    double now() const { return playing_ ? ahead_ : glfwGetTime() + ahead_; }
+
+    /// Frames until nothing moves, without waiting for what is due later; at most 300, for motion that never rests.
     void settle() {
         for (int i = 0; i < 300; ++i) {
             glfwPollEvents();
             frame();
             const double wake = program_->wake_after();
             if (!std::isfinite(wake)) return;
-            if (wake > 0) glfwWaitEventsTimeout(std::min(wake, 0.5));
+            ahead_ += std::max(wake, 1.0 / 60);
         }
     }
 
@@ -205,18 +212,13 @@ class Window {
         int width = 0, height = 0;
         glfwGetFramebufferSize(window_, &width, &height);
         if (width > 0 && height > 0) {
-            Surface surface;
-            surface.pixel_ratio = pixel_ratio();
-            surface.width = width / surface.pixel_ratio;
-            surface.height = height / surface.pixel_ratio;
-            surface.system_dark = options_.dark || desktop_is_dark();
-            program_->set_surface(surface);
+            fit(width, height);
             ImGui_ImplOpenGL3_NewFrame();
-            program_->frame(glfwGetTime());
+            program_->frame(now());
             if (program_->font_changed()) {
                 ImGui_ImplOpenGL3_DestroyFontsTexture();
                 ImGui_ImplOpenGL3_CreateFontsTexture();
-                program_->frame(glfwGetTime());  // the frame just built still names the old texture
+                program_->frame(now());  // the frame just built still names the old texture
             }
             draw(width, height);
             glfwSwapBuffers(window_);
@@ -225,6 +227,19 @@ class Window {
         for (const Request& request : program_->take_requests()) answer(request);
         const std::string title = program_->plan().name + " \xe2\x80\x93 " + name;
         if (title != title_) glfwSetWindowTitle(window_, (title_ = title).c_str());
+    }
+
+    /// Tells the program of its surface when that has changed: being told is a reason to draw again.
+    void fit(int width, int height) {
+        const double ratio = pixel_ratio();
+        if (width == width_ && height == height_ && ratio == ratio_) return;
+        width_ = width, height_ = height, ratio_ = ratio;
+        Surface surface;
+        surface.pixel_ratio = ratio;
+        surface.width = width / ratio;
+        surface.height = height / ratio;
+        surface.system_dark = options_.dark || desktop_is_dark();
+        program_->set_surface(surface);
     }
 
     static void draw(int width, int height) {
@@ -320,7 +335,10 @@ class Window {
     Options options_;
     GLFWwindow* window_ = nullptr;
     std::unique_ptr<Program> program_;
-    bool drawing_ = false, stirred_ = true, complained_ = false;
+    bool drawing_ = false, stirred_ = true, complained_ = false, playing_ = false;
+    double ahead_ = 0.0;          ///< s that the program's clock is before GLFW's
+    int width_ = 0, height_ = 0;  ///< physical pixels, as the program knows them
+    double ratio_ = 0.0;
     std::array<GLFWcursor*, 5> cursors_{};
     std::size_t cursor_ = 0;
     Pointer pointer_;

@@ -26,6 +26,15 @@ on_screen --shot "$here/phone.ppm" --size 360x640 --scale 2 || fail "the window 
 on_screen --shot "$here/dark.ppm" --size 1280x800 --dark
 cmp -s "$here/first.ppm" "$here/dark.ppm" && fail "the dark theme looks like the light one"
 
+# Processor time, in hundredths of a second, over three seconds in which nothing happens.
+idle=$(timeout 120 xvfb-run -a -s "-screen 0 1600x1200x24" bash -c '
+  "$0" & window=$!
+  sleep 10; before=$(cut -d" " -f14,15 /proc/$window/stat)
+  sleep 3; after=$(cut -d" " -f14,15 /proc/$window/stat)
+  kill $window; wait $window 2> /dev/null
+  set -- $before $after; echo $(($3 + $4 - $1 - $2))' "$program")
+[ "$idle" -le 15 ] || fail "the idle window used ${idle}0 ms of processor in 3 s"
+
 printf 'wait\nkey 4\nwait\n' > "$here/script"
 on_screen --shot "$here/lanes.ppm" --size 1280x800 --script "$here/script" || fail "the script did not play"
 cmp -s "$here/first.ppm" "$here/lanes.ppm" && fail "key 4 did not change the view"
