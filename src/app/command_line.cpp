@@ -148,6 +148,13 @@ int check(const Order& order, const Plan& plan, const Streams& streams) {
     return give(order, streams, text, poor > 0 || !answers.faults.empty() ? exit_poor : exit_fine);
 }
 
+int section(const Order& order, const Plan& plan, const Streams& streams) {
+    std::string fault;
+    const std::string table = write_section(plan, order.section, fault);
+    if (table.empty()) return complain(streams, spell(fault, order.units));
+    return give(order, streams, table);
+}
+
 int demo(const Order& order, const Streams& streams) {
     std::string names;
     for (const Demo& row : demos()) {
@@ -178,6 +185,7 @@ int run_command_line(const std::vector<std::string>& words, std::istream& in, st
             return demo(order, streams);
         case Command::answers:
         case Command::picture:
+        case Command::section:
         case Command::check:
             break;
     }
@@ -185,6 +193,7 @@ int run_command_line(const std::vector<std::string>& words, std::istream& in, st
     if (!plan) return exit_failed;
     if (order.command == Command::answers) return give(order, streams, write_answers(*plan, answers_for(*plan)));
     if (order.command == Command::picture) return give(order, streams, picture(order, *plan));
+    if (order.command == Command::section) return section(order, *plan, streams);
     return check(order, *plan, streams);
 }
 

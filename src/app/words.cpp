@@ -22,6 +22,8 @@ struct CommandRow {
 constexpr CommandRow commands[] = {
     {Command::answers, "answers", "PLAN", "every answer as JSON: values in SI, low and high, grade, reason, source"},
     {Command::picture, "picture", "PLAN VIEW", "a picture as SVG"},
+    {Command::section, "section", "PLAN",
+     "what the radar would record over the targets, as CSV: time in ns, then one column per antenna position in m"},
     {Command::check, "check", "PLAN",
      "what is thin or poor, in sentences; exit 0 fine, 1 something poor or at fault, 2 unreadable"},
     {Command::demo, "demo", "[NAME]", "the demo plans by name, or one of them as a plan file to start from"}};
@@ -42,6 +44,24 @@ bool read_size(const std::string& text, double& width, double& height) {
     return true;
 }
 
+/// "targets,noise" and the like; at least one, each known.
+bool read_parts(const std::string& text, SectionParts& parts) {
+    parts = {false, false, false, false};
+    for (std::size_t from = 0; from <= text.size();) {
+        const std::size_t comma = std::min(text.find(',', from), text.size());
+        const std::string word = text.substr(from, comma - from);
+        bool* part = word == "targets"  ? &parts.targets
+                     : word == "layers" ? &parts.layers
+                     : word == "direct" ? &parts.direct
+                     : word == "noise"  ? &parts.noise
+                                        : nullptr;
+        if (!part) return false;
+        *part = true;
+        from = comma + 1;
+    }
+    return true;
+}
+
 struct OptionRow {
     const char *name, *value;  ///< `value`: name of the word that follows it, or null
     unsigned where;            ///< commands that take it
@@ -50,7 +70,8 @@ struct OptionRow {
     bool (*take)(Order& order, const std::string& value);
 };
 const OptionRow options[] = {
-    {"-o", "FILE", bit(Command::answers) | bit(Command::picture) | bit(Command::check) | bit(Command::demo),
+    {"-o", "FILE",
+     bit(Command::answers) | bit(Command::picture) | bit(Command::section) | bit(Command::check) | bit(Command::demo),
      "writes to FILE instead of standard output",
      [](Order& order, const std::string& value) {
          order.output = value;
@@ -71,6 +92,22 @@ const OptionRow options[] = {
          order.units = UnitSystem::imperial;
          return true;
      }},
+    {"--include", "LIST", bit(Command::section),
+     "what the section holds, commas between: targets, layers, direct, noise; else targets,layers",
+     [](Order& order, const std::string& value) { return read_parts(value, order.section.parts); }},
+    {"--field", "WAY", bit(Command::section), "electric field along or across the targets; else along",
+     [](Order& order, const std::string& value) {
+         order.section.polarisation = value == "across" ? Polarisation::across : Polarisation::along;
+         return value == "along" || value == "across";
+     }},
+    {"--gain", "WAY", bit(Command::section),
+     "off, or even: what the ground and the spreading took is given back along each trace; else off",
+     [](Order& order, const std::string& value) {
+         order.section.even_gain = value == "even";
+         return value == "off" || value == "even";
+     }},
+    {"--focused", nullptr, bit(Command::section), "hyperbolas folded back (migration): depth in m instead of time",
+     [](Order& order, const std::string&) { return order.section.focused = true; }},
     {"--scale", "S", bit(Command::window), "pixels of the window to one of the layout, 0.5 to 4; else the monitor's",
      [](Order& order, const std::string& value) {
          order.window.scale = number(value).value_or(0.0);
@@ -197,6 +234,7 @@ std::string help_text() {
         "  groundgrain demo yard-pipe -o plan.json          a plan to start from; it is JSON, change it as you like\n"
         "  groundgrain check plan.json                      what that survey will not show, and what would mend it\n"
         "  groundgrain picture plan.json beam -o beam.svg   the cut through the ground\n"
+        "  groundgrain section plan.json -o section.csv     the traces themselves, for another program\n"
         "  groundgrain answers plan.json | less             every number, with its reason and its source\n\n";
     return text + std::string(caution()) + "\n";
 }

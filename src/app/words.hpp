@@ -5,6 +5,7 @@
 
 #include "app/platform.hpp"
 #include "draw/units.hpp"
+#include "paper/section_file.hpp"
 
 namespace gg {
 
@@ -15,7 +16,8 @@ enum class Command : unsigned char {
     check = 8,
     demo = 16,
     help = 32,
-    version = 64
+    version = 64,
+    section = 128
 };
 
 /// One call, understood.
@@ -27,6 +29,7 @@ struct Order {
     double width = 820, height = 640;  ///< css px, with `picture`
     bool dark = false;
     UnitSystem units = UnitSystem::metric;
+    SectionOrder section;
     platform::Options window;
     std::string fault;  ///< one sentence; not empty: the call was not understood
 };

@@ -2,6 +2,8 @@
 
 #include <doctest/doctest.h>
 
+#include <algorithm>
+#include <cmath>
 #include <cstdio>
 #include <fstream>
 #include <nlohmann/json.hpp>
@@ -10,6 +12,7 @@
 #include "draw/figure.hpp"
 #include "paper/plan_file.hpp"
 #include "survey/answers.hpp"
+#include "survey/section.hpp"
 
 using namespace gg;
 
@@ -101,6 +104,75 @@ TEST_CASE("check tells what is thin or poor, and its status says whether anythin
     CHECK(has(overlapping.out, "overlap"));
 }
 
+TEST_CASE("section writes the traces as a table: time in ns, then one column per antenna position in m") {
+    nlohmann::json json = nlohmann::json::parse(demo_plan());
+    json["pass"]["step"] = 0.1;
+    json["pass"]["samples"] = 64;
+    const Run result = run({"section", "-"}, json.dump());
+    CHECK(result.status == 0);
+    CHECK(result.err.empty());
+    CHECK(has(result.out, "Holds: targets, layers. Electric field along the targets"));
+    CHECK(has(result.out, "cannot prove"));
+
+    // Read back with a reader of our own, against the library.
+    const Plan plan = read_plan(json.dump()).plan;
+    const Section section = section_for(plan, Detail::exact);
+    const std::vector<double> record = record_of(section, {});
+    double strongest = 0.0;
+    for (const double value : record) strongest = std::max(strongest, std::abs(value));
+    std::istringstream lines(result.out);
+    std::string line;
+    int row = -1;
+    while (std::getline(lines, line)) {
+        if (line.rfind('#', 0) == 0) continue;
+        std::istringstream cells(line);
+        std::string cell;
+        REQUIRE(std::getline(cells, cell, ','));
+        if (row < 0)
+            CHECK(cell == "time_ns");
+        else
+            CHECK(std::stod(cell) == doctest::Approx(60.0 / 64 * row));
+        int column = 0;
+        for (; std::getline(cells, cell, ','); ++column) {
+            const double want = row < 0 ? section.first + column * section.step
+                                        : record[static_cast<std::size_t>(column * section.samples + row)];
+            CHECK(std::abs(std::stod(cell) - want) <= 1e-5 * (row < 0 ? 1.0 : strongest));
+        }
+        CHECK(column == section.traces);
+        ++row;
+    }
+    CHECK(row == 64);
+}
+
+TEST_CASE("section's switches change what is in the table") {
+    nlohmann::json json = nlohmann::json::parse(demo_plan());
+    json["pass"]["step"] = 0.2;
+    json["pass"]["samples"] = 64;
+    const auto table = [&](std::vector<std::string> words) {
+        words.insert(words.begin(), {"section", "-"});
+        const Run result = run(words, json.dump());
+        CHECK(result.status == 0);
+        return result.out.substr(result.out.find("\n", result.out.find("cannot prove")));
+    };
+    const std::string plain = table({});
+    CHECK(table({"--include", "targets,layers"}) == plain);
+    CHECK(table({"--include", "layers,targets", "--field", "along", "--gain", "off"}) == plain);
+    for (const std::vector<std::string>& words : {std::vector<std::string>{"--include", "targets"},
+                                                  {"--include", "targets,layers,noise"},
+                                                  {"--include", "direct"},
+                                                  {"--field", "across"},
+                                                  {"--gain", "even"}})
+        CHECK_MESSAGE(table(words) != plain, words.back());
+    CHECK(table({"--focused"}).rfind("\ndepth_m,", 0) == 0);
+    check_refused(run({"section", "-", "--include", "targets,birds"}, json.dump()), "--include cannot be");
+    check_refused(run({"section", "-", "--include", ""}, json.dump()), "--include cannot be");
+    check_refused(run({"section", "-", "--field", "up"}, json.dump()), "along or across");
+    check_refused(run({"section", "-", "--gain", "lots"}, json.dump()), "off, or even");
+    check_refused(run({"answers", "-", "--focused"}, json.dump()), "does not go with this command");
+    json["target"]["shape"] = "flat";
+    check_refused(run({"section", "-"}, json.dump()), "round targets");
+}
+
 TEST_CASE("a plan that cannot be read is one sentence and status 2") {
     check_refused(run({"check", "no-such-folder/plan.json"}), "Cannot read no-such-folder/plan.json: No such file");
     check_refused(run({"answers", "-"}, "hello"), "This file is not JSON.");
@@ -142,8 +214,8 @@ TEST_CASE("no command opens the window, with the plan and options given") {
 TEST_CASE("help names every command and view, and the caution; the demo plans are listed and written") {
     const Run help = run({"--help"});
     CHECK(help.status == 0);
-    for (const char* words : {"answers PLAN", "picture PLAN VIEW", "check PLAN", "demo [NAME]", "--size WxH", "beam",
-                              "lanes", "cannot prove", "Examples"})
+    for (const char* words : {"answers PLAN", "picture PLAN VIEW", "section PLAN", "check PLAN", "demo [NAME]",
+                              "--size WxH", "beam", "lanes", "cannot prove", "Examples"})
         CHECK_MESSAGE(has(help.out, words), words);
     CHECK(run({"check", "-h"}).out == help.out);
     CHECK(has(run({"--version"}).out, "Groundgrain 0."));
