@@ -13,8 +13,9 @@ separation, V/m, rounded to 1e-6 of the scene's peak) and recorded.json, where
   rms_error_of_fine  beyond_fine * rms_between_grids, the fine grid's own error
 
 Metal is drawn in whole cells. Where the field lies along it the solver's wall stands inside the radius asked for, by 0.28 to
-0.43 of a cell on a lone bar in uniform ground set beside the exact series: so metal is drawn 0.35 of a cell larger there. Across it nothing
-is set right: of metal in that polarisation there is no recording yet, nor of any scene that recorded.json does not list.
+0.43 of a cell on a lone bar in uniform ground set beside the exact series: so metal is drawn 0.35 of a cell larger there.
+Across it nothing is set right: of metal in that polarisation there is no recording yet, nor of any scene that recorded.json
+does not list.
 
 The source is the Ricker current of scenes.json itself, so nothing has to be deconvolved. Solver units: length 1 m, c = 1,
 mu0 = eps0 = 1; a field in them times the impedance of vacuum is V/m per ampere. Conductivity is sigma / (eps0 eps_r) * 1 m / c.
