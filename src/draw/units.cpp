@@ -172,6 +172,8 @@ std::string say(double si, Quantity quantity, UnitSystem units) {
     if (quantity == Quantity::angle || quantity == Quantity::temperature) return joined(fixed(x, 0), unit.name);
     // Metres under ten always show centimetres, "0.90 m", so that a dragged number does not change its length.
     if (is_metre(unit) && std::abs(x) < 9.995) return joined(fixed(x, 2), unit.name);
+    // Below a hundredth of a percent the digits say nothing any more.
+    if (quantity == Quantity::fraction && x > 0.0 && x < 0.01) return "<0.01%";
     // Millimetres that stand for a length under a tenth of a metre are whole; a bar's or a step's may be 12.5.
     const int digits = quantity == Quantity::length && std::string_view(unit.name) == "mm" ? 2 : 3;
     return joined(significant(x, digits), unit.name);

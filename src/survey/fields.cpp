@@ -93,7 +93,7 @@ void each_number(P& plan, Visit&& visit) {
     visit(Row{"target.count", "How many", Q::count, 1.0, 12.0, 1.0}, target.count);
     visit(Row{"target.gap", "Gap, centres", Q::length, 0.002, 100.0, 0.0}, target.gap);
     visit(Row{"target.length", "Length", Q::length, 0.01, 10000.0, 0.0}, target.length);
-    visit(Row{"target.bearing", "Bearing", Q::angle, 0.0, pi, pi / 36}, target.bearing);
+    visit(Row{"target.bearing", "Target bearing", Q::angle, 0.0, pi, pi / 36}, target.bearing);
 
     auto& antenna = plan.antenna;
     visit(Row{"antenna.frequency", "Frequency", Q::frequency, 10e6, 6e9, 0.0}, antenna.pulse.centre_frequency);

@@ -69,7 +69,7 @@ void add_lanes(const Scene& scene, const Patch& patch, Answers& answers) {
     hits.rules = {{"at least three hits to call it a line", 3.0, "common practice, no source"}};
     mend(hits);
 
-    Answer& whole = add(answers, Group::lanes, "lanes.picture", "Widest gap a picture can bridge", Quantity::length,
+    Answer& whole = add(answers, Group::lanes, "lanes.picture", "Gap a picture bridges", Quantity::length,
                         spread_over(scene.cases, [&](const Case& k) {
                             const Case& c = scene.likely();
                             return bridge * std::sqrt(k.wave().wavelength * k.depth / (c.wave().wavelength * c.depth));

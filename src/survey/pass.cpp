@@ -136,7 +136,7 @@ void sample_answers(const Scene& scene, Answers& answers) {
     const Grade grade = chosen <= six * (1.0 + 1e-9) ? Grade::good : chosen <= nyquist ? Grade::thin : Grade::poor;
 
     Answer& interval =
-        add(answers, Group::pass, "pass.interval", "Largest sampling interval", Quantity::time, just(nyquist));
+        add(answers, Group::pass, "pass.interval", "Sampling interval", Quantity::time, just(nyquist));
     interval.grade = grade;
     interval.why =
         grade == Grade::poor
@@ -182,7 +182,7 @@ void sample_answers(const Scene& scene, Answers& answers) {
         spread.high = std::max(spread.high, e);
     }
     Answer& error =
-        add(answers, Group::pass, "pass.error", "Worst error of the rebuilt pulse", Quantity::fraction, spread);
+        add(answers, Group::pass, "pass.error", "Rebuilding error", Quantity::fraction, spread);
     error.grade = error.high <= 0.02 ? Grade::good : error.likely.value <= 0.1 ? Grade::thin : Grade::poor;
     error.why = "Rebuilt from its samples the echo is at worst " + token(likely.band_limited, Quantity::fraction) +
                 " off; its dots joined by straight lines are " + token(likely.joined, Quantity::fraction) + " off.";

@@ -28,6 +28,7 @@ TEST_CASE("numbers are said as a person would, with one unit") {
     CHECK(say(0.0949e9, Quantity::speed, metric) == "0.0949 m/ns");
     CHECK(say(1.0, Quantity::attenuation, metric) == "8.69 dB/m");
     CHECK(say(0.125, Quantity::fraction, metric) == "12.5%");
+    CHECK(say(8.9e-6, Quantity::fraction, metric) == "<0.01%");
     CHECK(say(pi / 4, Quantity::angle, metric) == "45\u00b0");
     CHECK(say(20, Quantity::temperature, imperial) == "68 \u00b0F");
     CHECK(say(512, Quantity::count, metric) == "512");
