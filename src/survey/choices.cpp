@@ -14,9 +14,9 @@ struct Named {
     const char *id, *name;
 };
 
-constexpr Named<TargetShape> shapes[] = {{TargetShape::round, "round", "Round and long: pipe, bar, duct, cable"},
-                                         {TargetShape::flat, "flat", "Flat: layer, slab base, split"},
-                                         {TargetShape::compact, "compact", "Compact: stone, short void"}};
+constexpr Named<TargetShape> shapes[] = {{TargetShape::round, "round", "Pipe, bar or cable"},
+                                         {TargetShape::flat, "flat", "Flat layer or split"},
+                                         {TargetShape::compact, "compact", "Stone or short void"}};
 constexpr Named<Filling> fillings[] = {{Filling::metal, "metal", "Metal"},
                                        {Filling::plastic_air, "plastic-air", "Plastic, empty"},
                                        {Filling::plastic_water, "plastic-water", "Plastic, full of water"},
