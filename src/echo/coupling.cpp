@@ -21,14 +21,13 @@ struct ByBoundaries {
     int reach;
     std::vector<Cx> odd, even;
 
-    ByBoundaries(const Scatterer& q, const Scatterer& p, const Host& host, const Spectra& spectra, int count,
-                 int stride)
+    ByBoundaries(const Scatterer& q, const Scatterer& p, const Host& host, const Spectra& spectra, int count)
         : reach(q.order() + p.order()), odd(2 * static_cast<std::size_t>(reach) + 1), even(odd.size()) {
-        const double x = q.x - p.x, scale = stride * spectra.spacing / pi;
+        const double x = q.x - p.x, scale = spectra.spacing / pi;
         const Cx inverse_k = Cx{1.0} / spectra.k;
         Cx* const odd0 = odd.data() + reach;
         Cx* const even0 = even.data() + reach;
-        for (std::size_t at = 0; at < static_cast<std::size_t>(count); at += static_cast<std::size_t>(stride)) {
+        for (std::size_t at = 0; at < static_cast<std::size_t>(count); ++at) {
             const double kx = static_cast<double>(at) * spectra.spacing;
             const Cx kz = spectra.kz[at], U = spectra.above[at];
             const Cx front = (scale * (at == 0 ? 0.5 : 1.0)) * (Cx{1.0} / kz);  // +kx and -kx are one point at 0
@@ -65,8 +64,8 @@ struct ByBoundaries {
 
 /// Fills the block of C that leads from p to q, and by reciprocity the one that leads back.
 void fill(Matrix& C, int row, int column, const Scatterer& q, const Scatterer& p, const Host& host,
-          const Spectra& spectra, int count, int stride) {
-    const ByBoundaries by(q, p, host, spectra, count, stride);
+          const Spectra& spectra, int count) {
+    const ByBoundaries by(q, p, host, spectra, count);
     const bool same = row == column;
     const double dx = q.x - p.x, dz = q.above - p.above, d = std::hypot(dx, dz);
     const int reach = q.order() + p.order();
@@ -94,7 +93,7 @@ void fill(Matrix& C, int row, int column, const Scatterer& q, const Scatterer& p
 }  // namespace
 
 std::vector<Complex> joint_answer(const std::vector<Scatterer>& targets, const Host& host, const Spectra& spectra,
-                                  int count, int stride) {
+                                  int count) {
     int size = 0;
     for (const Scatterer& target : targets) size += target.size();
     Matrix C(size, size);
@@ -102,7 +101,7 @@ std::vector<Complex> joint_answer(const std::vector<Scatterer>& targets, const H
     for (std::size_t q = 0; q < targets.size(); row += targets[q++].size()) {
         int column = 0;
         for (std::size_t p = 0; p <= q; column += targets[p++].size())
-            fill(C, row, column, targets[q], targets[p], host, spectra, count, stride);
+            fill(C, row, column, targets[q], targets[p], host, spectra, count);
     }
     const Matrix T = (Matrix::Identity(size, size) - C).partialPivLu().inverse();
     return {T.data(), T.data() + T.size()};

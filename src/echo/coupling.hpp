@@ -23,12 +23,11 @@ struct Scatterer {
 /// Joint answer T, row-major, of all orders n = -order .. order of all targets in turn: with a the incident
 /// coefficients scaled by root, the outgoing ones are b = root * (T a). One lone target far from every boundary has T
 /// = 1.
-/// @param count   points of kx, from 0, that the paths by the boundaries need
-/// @param stride  every how manieth of them is enough
+/// @param count  points of kx, from 0, that the paths by the boundaries need
 /// T = (1 - C)^-1, C holding the direct paths (Graf's addition theorem) and those by the boundaries as sums over kx.
 /// Source: multiple scattering by T-matrix, textbook (Chew 1990, from memory); checked against reciprocity, energy and
 /// recorded finite-difference traces in tests/echo.
 std::vector<Complex> joint_answer(const std::vector<Scatterer>& targets, const Host& host, const Spectra& spectra,
-                                  int count, int stride);
+                                  int count);
 
 }  // namespace gg

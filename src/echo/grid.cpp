@@ -7,7 +7,7 @@
 namespace gg {
 namespace {
 
-constexpr double oversampling = 1.4;
+constexpr double oversampling = 1.35;
 constexpr int taps = 16;
 
 /// Rows of positions, real and imaginary parts apart so that the compiler can work on several positions at once.
@@ -144,7 +144,7 @@ std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vect
     };
     std::vector<std::vector<Part>> parts(static_cast<std::size_t>(rows));
     for (int i = 0; i < rows * rows; ++i) {
-        if (!(std::abs(joint[i]) * g_most[partner[i / rows]] * a_most[i % rows] > 0.1 * share * most)) continue;
+        if (!(std::abs(joint[i]) * g_most[partner[i / rows]] * a_most[i % rows] > 0.03 * share * most)) continue;
         parts[i / rows].push_back({i % rows, joint[i].real(), joint[i].imag()});
     }
     std::vector<Complex> out(static_cast<std::size_t>(grid.size));

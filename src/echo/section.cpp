@@ -21,7 +21,6 @@ namespace {
 
 constexpr double damping = 6.0;     // delta T, Np
 constexpr double faintest = 1e-4;   // of the pulse's spectral peak
-constexpr double air_share = 0.6;   // of the way light goes in a period: see way_round
 constexpr double tolerance = 1e-4;  // of the strongest part, at the pulse's peak frequency
 
 /// Time grid that holds the wanted samples, starts before anything is sent and has a fast length.
@@ -98,28 +97,23 @@ std::vector<Complex> matter_of(const Cylinder& cylinder, const Inner& host, doub
     return s;
 }
 
-/// Distance after which the line may close on itself. An image's echo takes (its own leg round, plus the true leg back)
-/// at least the whole way round at the ground's speed, two image legs twice the way to the nearer one; both then come
-/// after the period and are damped. What runs through the air sinks into the ground along the surface as x^-3/2 and is
-/// let in earlier.
+/// Distance after which sums over kx may repeat themselves. An image's echo takes (its own leg round, plus the true leg
+/// back) at least the whole way round at the ground's speed, two image legs twice the way to the nearer one; both then
+/// come after the period and are damped. What runs round through the air still has to go down to the target and the
+/// true leg up.
 double way_round(const Scene& scene, double care, double period) {
     double fastest = 0.0;
     for (const double speed : speeds(scene.ground, scene.pulse.centre_frequency)) fastest = std::max(fastest, speed);
     const double first = scene.sampling.first, last = first + scene.sampling.step * (scene.sampling.traces - 1);
-    double farthest = 0.0;
-    for (const RoundTarget& t : scene.targets)
+    double farthest = 0.0, legs = scene.targets.empty() ? 0.0 : period;
+    for (const RoundTarget& t : scene.targets) {
         farthest = std::max({farthest, std::fabs(t.x - first), std::fabs(t.x - last)});
+        const double down = time_down(scene.ground, t.depth - t.radius, scene.pulse.centre_frequency).value;
+        legs = std::min(legs, 2.0 * down + scene.height / speed_of_light);
+    }
     farthest += scene.separation;
-    return std::max(
-        {fastest * period, 0.5 * fastest * period + farthest, farthest + care * air_share * speed_of_light * period});
-}
-
-/// The same for the paths between targets, which are weak already: half of it suffices.
-double way_between(const Scene& scene, double care, double period) {
-    double fastest = 0.0, apart = 0.0;
-    for (const double speed : speeds(scene.ground, scene.pulse.centre_frequency)) fastest = std::max(fastest, speed);
-    for (const RoundTarget& t : scene.targets) apart = std::max(apart, std::fabs(t.x - scene.targets[0].x));
-    return 2.0 * apart + care * 0.5 * std::max(fastest, air_share * speed_of_light) * period;
+    const double by_air = speed_of_light * std::max(0.3 * period, period - legs);
+    return std::max({fastest * period, 0.5 * fastest * period + farthest, farthest + std::sqrt(care) * by_air});
 }
 
 struct Tone {
@@ -137,7 +131,6 @@ class Engine {
           delta_(damping / period_.length()) {
         const Sampling& s = scene.sampling;
         line_ = {s.first, s.step, s.traces, scene.separation, way_round(scene, care, period_.length())};
-        stride_ = std::max(1, static_cast<int>(line_.period / way_between(scene, care, period_.length())));
         for (int i = 0; i < s.samples; ++i)
             gain_.push_back(std::exp(delta_ * (i + period_.lead) * period_.dt) / period_.length());
         bins_ = static_cast<std::size_t>(period_.size) / 2 + 1;
@@ -229,7 +222,7 @@ class Engine {
             const Complex constant =
                 along ? -4.0 / (tone.w * vacuum_permeability)
                       : 4.0 / (tone.w * vacuum_permittivity * media.ground[host_.layer].permittivity);
-            const std::vector<Complex> joint = joint_answer(targets, host_, spectra, count_between, stride_);
+            const std::vector<Complex> joint = joint_answer(targets, host_, spectra, count_between);
             const std::vector<Complex> echo = echo_on(grid, line_, targets, host_, spectra, count_in, joint, share);
             std::vector<Complex> traces(static_cast<std::size_t>(line_.traces));
             onto_traces(grid, line_, echo, constant, traces.data(), 1);
@@ -267,7 +260,6 @@ class Engine {
     double delta_;
     std::vector<double> gain_;  ///< undoes the damping, sample by sample
     Line line_;
-    int stride_ = 1;  ///< of kx, for the paths between targets, which need no room for the line
     std::size_t bins_ = 0;
     Transform transform_;
     std::vector<Complex> field_;  ///< rows of half spectra: traces, then layers, then direct

@@ -154,7 +154,7 @@ TEST_CASE("Two coupled lossless targets scatter just what they take out of the w
             for (const Complex& s : t.s) t.root.push_back(std::sqrt(s));
             targets.push_back(t);
         }
-        const std::vector<Complex> joint = joint_answer(targets, {1, 0.0, 0.0}, none, 0, 1);
+        const std::vector<Complex> joint = joint_answer(targets, {1, 0.0, 0.0}, none, 0);
         const int size = targets[0].size(), all = 2 * size;
         const double way = 0.7;  // direction of the incident wave
         std::vector<Complex> a(static_cast<std::size_t>(all)), b(a.size());
