@@ -124,6 +124,13 @@ std::string picture(const Order& order, const Plan& plan) {
     style.dark = order.dark;
     style.units = order.units;
     style.handles = false;
+    PairSection section;
+    if (view->view == View::pair) {
+        section = pair_section(plan, Detail::full, order.section.polarisation);
+        add_focused(section);
+        add_separation(section, plan);
+        style.section = &section;
+    }
     svg.describe(view->draw(canvas, plan, answers, style).description);
     return svg.finish();
 }

@@ -95,7 +95,8 @@ const OptionRow options[] = {
     {"--include", "LIST", bit(Command::section),
      "what the section holds, commas between: targets, layers, direct, noise; else targets,layers",
      [](Order& order, const std::string& value) { return read_parts(value, order.section.parts); }},
-    {"--field", "WAY", bit(Command::section), "electric field along or across the targets; else along",
+    {"--field", "WAY", bit(Command::section) | bit(Command::picture),
+     "electric field along or across the targets; else along",
      [](Order& order, const std::string& value) {
          order.section.polarisation = value == "across" ? Polarisation::across : Polarisation::along;
          return value == "along" || value == "across";

@@ -7,16 +7,27 @@
 #include "draw/palette.hpp"
 #include "draw/units.hpp"
 #include "survey/answers.hpp"
+#include "survey/section.hpp"
 
 namespace gg {
+
+/// How the section is looked at; no part of the plan.
+struct SectionLook {
+    Gain gain = Gain::even;
+    bool layers = false;   ///< with the echoes of the layers' boundaries; without, as after background removal
+    bool focused = false;  ///< where only one fits: the focused picture instead of the raw one
+    bool operator==(const SectionLook&) const = default;
+};
 
 struct FigureStyle {
     Box box;  ///< where to draw, css px
     bool dark = false;
     UnitSystem units = UnitSystem::metric;
-    double text = 14.0;   ///< css px of normal text in the picture; small text is 0.85 of it
-    bool handles = true;  ///< draw the drag handles (off in print)
-    std::string held;     ///< key of the handle being dragged now, drawn strong; empty: none
+    double text = 14.0;                    ///< css px of normal text in the picture; small text is 0.85 of it
+    bool handles = true;                   ///< draw the drag handles (off in print)
+    std::string held;                      ///< key of the handle being dragged now, drawn strong; empty: none
+    const PairSection* section = nullptr;  ///< of this plan, for Pair; null: travel times are drawn instead
+    SectionLook look{};
 };
 
 /// Something on the picture that drags one number of the plan.

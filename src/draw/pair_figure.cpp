@@ -2,12 +2,16 @@
 #include <array>
 #include <cmath>
 
+#include "draw/pair_words.hpp"
 #include "draw/parts.hpp"
+#include "draw/section_panel.hpp"
 #include "draw/textures.hpp"
 #include "wave/layers.hpp"
 
 namespace gg {
 namespace {
+
+constexpr double shade_height = 10.0;  // css px
 
 struct Pair {
     Canvas& canvas;
@@ -16,16 +20,28 @@ struct Pair {
     const FigureStyle& style;
     const Palette& colours;
     Labels labels;
-    Box curve, panel, ground;        ///< from the top: strength along the line, travel times, targets to scale
-    double from = 0.0, to = 1.0;     ///< m along the line
-    double first = 0.0, last = 1.0;  ///< s, of the panel
-    double most = 1.0;               ///< strength that fills the curve's box
+    Box curve, panel, ground;           ///< from the top: strength along the line, travel times, targets to scale
+    double from = 0.0, to = 1.0;        ///< m along the line
+    double first = 0.0, last = 1.0;     ///< s, of the panel
+    double most = 1.0;                  ///< strength that fills the curve's box
+    const PairSection* seen = nullptr;  ///< the section, where there is one to show
+    Box image{};                        ///< the focused picture beside the panel; no width: not beside it
+    bool by_depth = false;              ///< the panel itself shows the focused picture: first and last are m of depth
     Figure figure{};
 
     double x(double position) const { return panel.x + (position - from) / (to - from) * panel.width; }
     double y(double time) const { return panel.y + (time - first) / (last - first) * panel.height; }
     double scale() const { return panel.width / (to - from); }
     double small() const { return 0.85 * style.text; }
+    PairWords words() const { return {plan, answers, seen, style.units}; }
+    double middle() const { return answers.pair.first + 0.5 * plan.target.gap; }
+    /// The panel, and the picture beside it, in the section's own places along the line.
+    SectionFrame frame() const { return frame(panel, first, last); }
+    SectionFrame frame(Box box, double top, double bottom) const {
+        const std::vector<RoundTarget>& t = seen->scene.targets;
+        const double shift = 0.5 * (t[0].x + t[1].x) - middle();
+        return {box, from + shift, to + shift, top, bottom};
+    }
 };
 
 double least_of(const std::vector<double>& values) {
@@ -80,8 +96,54 @@ void draw_arrivals(Pair& p, const std::vector<double>& times, const std::vector<
     }
 }
 
-/// The inside of the middle panel: travel times of the two neighbours.
+void draw_name(Pair& p, const Box& box, const std::string& long_name, const std::string& short_name) {
+    const TextStyle words{p.colours.ink, p.small(), Across::left, Down::middle};
+    const Point at{box.x + 8, box.y + p.small()};
+    if (!p.labels.put({at}, long_name, words)) p.labels.put({at}, short_name, words);
+}
+
+/// Each target where it lies in the focused picture, in whose own two scales it is no circle.
+void draw_outlines(Pair& p, const SectionFrame& frame) {
+    for (const RoundTarget& target : p.seen->scene.targets) {
+        std::array<Point, 33> edge;
+        for (std::size_t i = 0; i < edge.size(); ++i) {
+            const double angle = 2 * pi * static_cast<double>(i) / (edge.size() - 1);
+            edge[i] = {frame.x(target.x + target.radius * std::cos(angle)),
+                       frame.y(target.depth + target.radius * std::sin(angle))};
+        }
+        p.canvas.line(edge, {p.colours.ink.with_alpha(0.7), 1.2, 2, 3});
+    }
+}
+
+void draw_image(Pair& p, const SectionFrame& frame) {
+    p.canvas.box(frame.box, p.colours.panel, 4);
+    p.canvas.push_clip(frame.box);
+    draw_focused(p.canvas, frame, *p.seen, p.style.look, p.colours.dark);
+    draw_outlines(p, frame);
+    p.canvas.pop_clip();
+    draw_name(p, frame.box, "Focused, " + gain_words(p.style.look.gain), "Focused");
+}
+
+void draw_section(Pair& p) {
+    if (p.by_depth) return draw_image(p, p.frame());
+    p.canvas.box(p.panel, p.colours.panel, 4);
+    draw_record(p.canvas, p.frame(), *p.seen, p.style.look, p.colours.dark);
+    draw_travel_times(p.canvas, p.frame(), *p.seen, p.colours.ink.with_alpha(0.6));
+    const double end = p.plan.pass.window;
+    if (end > p.first && end < p.last) {
+        p.canvas.line(points({Point{p.panel.x, p.y(end)}, Point{p.panel.right(), p.y(end)}}),
+                      {p.colours.warn, 1.4, 6, 4});
+        p.labels.put({{p.panel.right() - 8, p.y(end) + 0.8 * p.small()}}, "the window ends here",
+                     {p.colours.warn, p.small(), Across::right, Down::middle});
+    }
+    const bool coarse = p.seen->detail == Detail::coarse;
+    draw_name(p, p.panel, "Raw, " + (coarse ? "coarse while you drag" : gain_words(p.style.look.gain)),
+              coarse ? "coarse" : "Raw");
+}
+
+/// The inside of the middle panel: the section, or else the travel times of the two neighbours.
 void draw_panel(Pair& p) {
+    if (p.seen) return draw_section(p);
     const PairPicture& pair = p.answers.pair;
     p.canvas.box(p.panel, p.colours.panel, 4);
     p.canvas.push_clip(p.panel);
@@ -100,7 +162,19 @@ void show_times(Pair& p, double apex) {
                            p.answers.pair.arrival_right.empty() ? 0.0 : p.answers.pair.arrival_right.front()}) {
         if (std::isfinite(t)) latest = std::max(latest, t);
     }
+    if (p.seen) {
+        // Where a hyperbola leaves the panel; early echoes of layers are worth seeing from the start.
+        const double away = (p.to - p.answers.pair.first) / p.seen->scene.sampling.step;
+        const std::size_t last = p.seen->arrivals.size() - 1;
+        latest = p.seen->arrivals[std::min(last, static_cast<std::size_t>(std::max(0.0, away)))];
+        latest = std::min(latest, 1.1 * p.plan.pass.window);
+    }
     p.last = nice_ceiling(std::max({1.1 * latest, apex + 1.5 * width, 1e-10}) * 1e9) * 1e-9;
+    if (p.seen) {
+        const double end = p.seen->section.start + p.seen->section.samples * p.seen->section.dt;
+        if (end < 0.999 * p.plan.pass.window && p.seen->detail == Detail::full) p.last = std::min(p.last, end);
+        if (p.style.look.layers) return;
+    }
     for (const double share : {0.5, 0.25}) {
         if (p.first == 0.0 && share * p.last < apex - 1.2 * width) p.first = share * p.last;
     }
@@ -119,16 +193,35 @@ void draw_shades(Pair& p, Box box) {
     p.canvas.image(box, static_cast<int>(n), 1, shades);
 }
 
-void draw_time_axis(Pair& p) {
-    const double x = p.panel.x;
+/// Ticks left of a box, the first of them with the unit's name.
+void draw_axis(Pair& p, Box box, double first, double last, double unit, const std::string& name) {
     const TextStyle words{p.colours.soft_ink, p.small(), Across::right, Down::middle};
     bool named = false;
     for (const double t :
-         ticks(p.first * 1e9, p.last * 1e9, std::max(1, static_cast<int>(p.panel.height / (2.4 * p.small()))))) {
-        const double y = p.y(t * 1e-9);
-        p.canvas.line(points({Point{x - 4, y}, Point{x, y}}), {p.colours.soft_ink, 1});
-        named |= p.labels.put({{x - 7, y}}, named ? tick_words(t) : tick_words(t) + " ns", words, false);
+         ticks(first / unit, last / unit, std::max(1, static_cast<int>(box.height / (2.4 * p.small()))))) {
+        const double y = box.y + (t * unit - first) / (last - first) * box.height;
+        p.canvas.line(points({Point{box.x - 4, y}, Point{box.x, y}}), {p.colours.soft_ink, 1});
+        named |= p.labels.put({{box.x - 7, y}}, named ? tick_words(t) : tick_words(t) + " " + name, words, false);
     }
+}
+
+/// Down to a round depth well below the targets, as far as the image goes.
+double deepest_shown(const Pair& p) {
+    const Image& image = p.seen->focused;
+    const RoundTarget& target = p.seen->scene.targets[0];
+    return std::min(nice_ceiling(1.5 * target.depth + target.radius), image.rows * image.spacing);
+}
+
+void draw_axes(Pair& p) {
+    const AxisUnit metres = length_axis(p.by_depth ? p.last : p.seen ? deepest_shown(p) : 1.0, p.style.units);
+    if (p.by_depth)
+        draw_axis(p, p.panel, p.first, p.last, metres.metres, metres.name);
+    else
+        draw_axis(p, p.panel, p.first, p.last, 1e-9, "ns");
+    if (!(p.image.width > 0)) return;
+    const SectionFrame frame = p.frame(p.image, 0.0, deepest_shown(p));
+    draw_image(p, frame);
+    draw_axis(p, frame.box, frame.first, frame.last, metres.metres, metres.name);
 }
 
 /// Both targets to scale in a strip of ground under the panel, at the panel's own places along the line.
@@ -172,8 +265,9 @@ void draw_ground(Pair& p) {
 void add_depth_handle(Pair& p) {
     const double apex = least_of(p.answers.pair.arrival_left), depth = p.plan.target.depth.likely;
     if (!(apex > 0)) return;
-    const Point grip = inside({p.panel.x + grip_radius + 4, p.y(apex)}, p.panel, grip_radius + 2);
-    const double per_px = depth / apex * (p.last - p.first) / p.panel.height;
+    const double place = p.by_depth ? depth : apex;
+    const Point grip = inside({p.panel.x + grip_radius + 4, p.y(place)}, p.panel, grip_radius + 2);
+    const double per_px = depth / place * (p.last - p.first) / p.panel.height;
     p.canvas.line(points({grip, Point{p.x(p.answers.pair.first), grip.y}}), {p.colours.wave, 1.2, 3, 4});
     p.figure.handles.push_back(
         {"target.depth", "Depth to top", grip, Handle::Way::down, depth, per_px, {}, 0.01, false, 0.0});
@@ -182,40 +276,21 @@ void add_depth_handle(Pair& p) {
                  {p.colours.wave, p.small(), Across::left, Down::bottom, true});
 }
 
-std::string verdict_words(PairPicture::Verdict verdict) {
-    switch (verdict) {
-        case PairPicture::Verdict::apart:
-            return "apart";
-        case PairPicture::Verdict::merging:
-            return "merging";
-        case PairPicture::Verdict::one:
-            return "one";
-    }
-    return {};
-}
-
-std::string sentence_of(const Pair& p) {
-    const std::string gap = say(p.plan.target.gap, Quantity::length, p.style.units);
-    switch (p.answers.pair.verdict) {
-        case PairPicture::Verdict::apart:
-            return "Two at " + gap + " show as two.";
-        case PairPicture::Verdict::merging:
-            return "Two at " + gap + " run together.";
-        case PairPicture::Verdict::one:
-            return "Two at " + gap + " look like one.";
-    }
-    return {};
-}
-
-std::string least_words(const Pair& p) {
-    const double least = answer_or(p.answers, "apart.sideways", 0.0);
-    return least > 0 ? "They part from " + say(least, Quantity::length, p.style.units) + "." : std::string();
+/// Under the picture: how to turn the antenna, and the rules; one line each, where there is room.
+void draw_captions(Pair& p, Box box) {
+    const TextStyle words{p.colours.soft_ink, p.small(), Across::left, Down::middle};
+    const PairWords said = p.words();
+    const double line = 1.4 * p.small(), x = box.x + 10, y = box.bottom() - (box.height > 2 * line ? 1.5 : 0.5) * line;
+    if (!p.labels.put({{x, y}}, said.turning(), words, false))
+        p.labels.put({{x, y}}, said.turning_in_brief(), words, false);
+    if (box.height >= 2 * line) p.labels.put({{x, y + line}}, said.rules(), words, false);
 }
 
 /// The verdict large, the sentences beside it: in one row, or in two where the picture is narrow.
 void draw_verdict(Pair& p, double height) {
     const TextStyle strong{p.colours.ink, 1.4 * p.style.text, Across::left, Down::middle, true};
-    const std::string verdict = verdict_words(p.answers.pair.verdict), first = sentence_of(p), second = least_words(p);
+    const PairWords said = p.words();
+    const std::string verdict(word_for(said.verdict())), first = said.sentence(), second = said.least();
     const double x = p.style.box.x + 10, y = p.style.box.y + 0.5 * height;
     p.canvas.text({x, y}, verdict, strong);
     const double after = x + p.canvas.measure(verdict, strong) + 14;
@@ -223,7 +298,38 @@ void draw_verdict(Pair& p, double height) {
     if (p.labels.put({{after, y}}, first + " " + second, row, false)) return;
     const TextStyle low{p.colours.ink, p.small(), Across::left, Down::middle};
     p.labels.put({{after, y - 0.62 * p.small()}}, first, low, false);
-    p.labels.put({{after, y + 0.64 * p.small()}}, second, low, false);
+    if (!p.labels.put({{after, y + 0.64 * p.small()}}, second, low, false))
+        p.labels.put({{after, y + 0.64 * p.small()}}, said.least_in_brief(), low, false);
+}
+
+/// From the top: verdict, strength along the line and its shades (without a section), panel, strip of ground, captions
+/// (with one). A section's focused picture stands beside the panel where there is room.
+void lay_out(Pair& p) {
+    const Box& box = p.style.box;
+    const PairPicture& pair = p.answers.pair;
+    const double gutter = 3.4 * p.style.text, pad = 10, head = 2.5 * p.style.text,
+                 strip = std::clamp((p.seen ? 0.12 : 0.16) * box.height, 34.0, 90.0);
+    const double line = 1.4 * p.small(), foot = !p.seen ? 0 : box.height > 420 ? 2 * line + 10 : line + 2;
+    const double hill = p.seen ? 0 : std::clamp(0.18 * box.height, 30.0, 130.0), shade = p.seen ? 0 : shade_height;
+    const bool focused = p.seen && p.seen->focused.rows > 1, beside = focused && box.width >= 560;
+    p.by_depth = focused && !beside && p.style.look.focused;
+    const double width = beside ? 0.5 * (box.width - pad) - gutter - 4 : box.width - gutter - pad;
+    p.curve = {box.x + gutter, box.y + head, width, hill};
+    const double top = p.seen ? box.y + head : p.curve.bottom() + shade + 8;
+    p.panel = {box.x + gutter, top, width, box.bottom() - foot - strip - 12 - top};
+    p.ground = {box.x + gutter, p.panel.bottom() + 6, width, strip};
+    if (beside) p.image = {p.panel.right() + 8 + gutter, top, width, p.ground.bottom() - top};
+    // A round stretch about the pair's middle, so that the scale stands still while the gap is dragged a little.
+    double reach = nice_floor(std::min(p.middle() - pair.positions.front(), pair.positions.back() - p.middle()));
+    if (p.seen) {
+        // The section's own line, which is a round stretch already.
+        const Sampling& s = p.seen->scene.sampling;
+        const double shift = 0.5 * (p.seen->scene.targets[0].x + p.seen->scene.targets[1].x);
+        reach =
+            std::max(std::min(shift - s.first, s.first + (s.traces - 1) * s.step - shift), 0.75 * p.plan.target.gap);
+    }
+    p.from = p.middle() - reach;
+    p.to = p.middle() + reach;
 }
 
 }  // namespace
@@ -233,40 +339,36 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     if (!drawable_box(style.box)) return {{}, "No room to draw."};
     if (pair.positions.size() < 2 || !(pair.positions.back() > pair.positions.front())) return {{}, "No pair to draw."};
     const Palette& colours = palette(style.dark);
-    Pair p{canvas, plan, answers, style, colours, Labels(canvas, colours, style.box), {}, {}, {},
-           0.0,    1.0,  0.0,     1.0,   {}};
-    const Box& box = style.box;
-    const double shade = 10, gutter = 3.4 * style.text, pad = 10, head = 2.5 * style.text;
-    const double width = box.width - gutter - pad, strip = std::clamp(0.16 * box.height, 34.0, 90.0),
-                 hill = std::clamp(0.18 * box.height, 30.0, 130.0);
-    p.curve = {box.x + gutter, box.y + head, width, hill};
-    p.panel = {box.x + gutter, p.curve.bottom() + shade + 8, width, box.height - head - hill - strip - shade - 20};
-    p.ground = {box.x + gutter, p.panel.bottom() + 6, width, strip};
-    // A round stretch about the pair's middle, so that the scale stands still while the gap is dragged a little.
-    const double middle = pair.first + 0.5 * plan.target.gap;
-    const double reach = nice_floor(std::min(middle - pair.positions.front(), pair.positions.back() - middle));
-    p.from = middle - reach;
-    p.to = middle + reach;
+    Pair p{canvas, plan, answers, style, colours, Labels(canvas, colours, style.box), {}, {}, {}};
+    if (style.section && style.section->section.ok() && style.section->scene.targets.size() > 1) p.seen = style.section;
+    lay_out(p);
     const double apex = std::min(least_of(pair.arrival_left), least_of(pair.arrival_right));
-    show_times(p, apex);
+    if (p.by_depth)
+        p.last = deepest_shown(p);
+    else
+        show_times(p, apex);
     for (const auto* curve : {&pair.response, &pair.alone_left, &pair.alone_right}) {
         for (const double v : *curve) {
             if (std::isfinite(v)) p.most = std::max(p.most, 1.04 * v);
         }
     }
-    if (!(width > 8 && p.panel.height > 8)) return {{}, "No room to draw."};
+    if (!(p.panel.width > 8 && p.panel.height > 8)) return {{}, "No room to draw."};
 
-    canvas.push_clip(box);
-    canvas.box(box, colours.paper);
-    draw_verdict(p, head);
-    draw_strength(p);
-    draw_shades(p, {p.curve.x, p.curve.bottom() + 3, p.curve.width, shade});
+    canvas.push_clip(style.box);
+    canvas.box(style.box, colours.paper);
+    draw_verdict(p, 2.5 * style.text);
+    if (!p.seen) {
+        draw_strength(p);
+        draw_shades(p, {p.curve.x, p.curve.bottom() + 3, p.curve.width, shade_height});
+    }
     draw_panel(p);
     draw_ground(p);
     add_depth_handle(p);
-    draw_time_axis(p);
-    p.figure.description = "Two neighbours " + say(plan.target.depth.likely, Quantity::length, style.units) +
-                           " deep: " + verdict_words(pair.verdict) + ". " + sentence_of(p) + " " + least_words(p);
+    draw_axes(p);
+    if (p.seen)
+        draw_captions(
+            p, {style.box.x, p.ground.bottom() + 4, style.box.width, style.box.bottom() - p.ground.bottom() - 4});
+    p.figure.description = p.words().description();
     finish_handles(canvas, colours, p.figure, style);
     canvas.pop_clip();
     return p.figure;

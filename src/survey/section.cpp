@@ -82,8 +82,9 @@ void lay_time(Scene& scene, const Target& target, const Pass& pass, Detail detai
                                        target.depth.likely, scene.pulse.centre_frequency)
                                     .time +
                           tail_widths / band_of(scene.pulse).width();
-    const double dt = s.window / s.samples;
-    s.samples = std::clamp(static_cast<int>(std::min(std::ceil(latest / dt), 1e6)), 2, s.samples);
+    // A round time, so that the picture stands still while something is dragged.
+    const double dt = s.window / s.samples, wanted = std::ceil(keyed_up(latest) / dt - 1e-6);
+    s.samples = std::clamp(static_cast<int>(std::min(wanted, 1e6)), 2, s.samples);
     s.window = s.samples * dt;
 }
 
@@ -234,7 +235,8 @@ Turning turning_for(const Plan& plan) {
     if (!(along > 0.0 && across > 0.0)) return out;
     out.along_db = 10.0 * std::log10(along / across);
     out.better = out.along_db >= 0.0 ? Polarisation::along : Polarisation::across;
-    const std::string name(name_of(plan.target)), by = token(std::abs(out.along_db), Quantity::loss);
+    const std::string name(name_of(plan.target)),
+        by = token(0.5 * std::round(2.0 * std::abs(out.along_db)), Quantity::loss);
     if (plan.target.shape == TargetShape::compact)
         out.words = "A compact target has no long side: turn the antenna as it is handiest.";
     else if (std::abs(out.along_db) < 1.0)

@@ -1,0 +1,97 @@
+#include "draw/pair_words.hpp"
+
+#include <cmath>
+
+#include "draw/parts.hpp"
+
+namespace gg {
+
+std::string gain_words(Gain gain) {
+    switch (gain) {
+        case Gain::recorded:
+            return "as recorded";
+        case Gain::even:
+            return "even gain";
+        case Gain::strong:
+            return "strong gain";
+    }
+    return {};
+}
+
+bool PairWords::measured() const { return seen && seen->separation && seen->separation->raw.lower_peak > 0; }
+
+PairPicture::Verdict PairWords::verdict() const {
+    if (!measured()) return answers.pair.verdict;
+    return seen->separation->raw.apart()       ? PairPicture::Verdict::apart
+           : seen->separation->focused.apart() ? PairPicture::Verdict::merging
+                                               : PairPicture::Verdict::one;
+}
+
+std::string PairWords::sentence() const {
+    std::string out = "Two at ";
+    out += say(plan.target.gap, Quantity::length, units);
+    switch (verdict()) {
+        case PairPicture::Verdict::apart:
+            return out += " show as two.";
+        case PairPicture::Verdict::merging:
+            return out += measured() ? " part only once focused." : " run together.";
+        case PairPicture::Verdict::one:
+            return out += " look like one.";
+    }
+    return out;
+}
+
+std::string PairWords::least() const {
+    const auto said = [&](double v) { return say(v, Quantity::length, units); };
+    std::string out = "They part from ";
+    if (measured()) {
+        const Value raw = seen->separation->least_raw, focused = seen->separation->least_focused;
+        if (!raw.ok() && !focused.ok()) return "They part at no gap.";
+        if (raw.ok()) out += said(raw.value) + " raw";
+        if (raw.ok() && focused.ok()) out += ", ";
+        if (focused.ok()) out += said(focused.value) + " focused";
+        return out += '.';
+    }
+    const double travel = answer_or(answers, "apart.sideways", 0.0);
+    if (!(travel > 0)) return {};
+    if (seen) out = "By travel times from ";
+    return out += said(travel) + ".";
+}
+
+std::string PairWords::least_in_brief() const {
+    constexpr std::string_view start = "They part from";
+    std::string out = least();
+    return out.starts_with(start) ? "From" + out.substr(start.size()) : out;
+}
+
+std::string PairWords::rules() const {
+    const Answer* sideways = answers.find("apart.sideways");
+    if (!sideways || !sideways->likely.ok()) return {};
+    std::string out = "By travel times ";
+    out += say(sideways->likely.value, Quantity::length, units);
+    for (const Rule& rule : sideways->rules) {
+        out += "; ";
+        out += rule.name + " " + say(rule.value, Quantity::length, units);
+    }
+    return out += '.';
+}
+
+std::string PairWords::turning() const { return seen ? spell(seen->turning.words, units) : std::string(); }
+
+std::string PairWords::turning_in_brief() const {
+    if (!seen || !(std::abs(seen->turning.along_db) >= 1.0) || plan.target.shape == TargetShape::compact) return {};
+    std::string out = seen->turning.better == Polarisation::along ? "Field along: " : "Field across: ";
+    return out += say(0.5 * std::round(2.0 * std::abs(seen->turning.along_db)), Quantity::loss, units) + " stronger";
+}
+
+std::string PairWords::description() const {
+    std::string out = "Two neighbours ";
+    out += say(plan.target.depth.likely, Quantity::length, units) + " deep: " + std::string(word_for(verdict())) + ". ";
+    out += sentence() + " " + least();
+    if (!seen) return out;
+    out += " ";
+    out += rules() + " " + turning();
+    return out += " Shapes and times are true; strength against depth, computed in two dimensions, is no power budget.";
+}
+
+}  // namespace gg
