@@ -293,10 +293,26 @@ void add_separation(PairSection& pair, const Plan& plan) {
     const bool full = pair.detail == Detail::full;
     const Scene scene = full ? pair.scene : scene_for(as_pair(plan), Detail::full, polarisation);
     const Section section = full ? pair.section : section_of(scene);
-    out.raw = dip_sideways(scene, section, Reading::raw);
-    out.focused = dip_sideways(scene, section, Reading::focused);
-    out.least_raw = smallest_gap(scene, Reading::raw);
-    out.least_focused = smallest_gap(scene, Reading::focused);
+    read_separation(scene, section, Reading::raw, out);
+    read_separation(scene, section, Reading::focused, out);
+}
+
+void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out) {
+    (reading == Reading::raw ? out.raw : out.focused) = dip_sideways(scene, section, reading);
+    (reading == Reading::raw ? out.least_raw : out.least_focused) = smallest_gap(scene, reading);
+}
+
+double section_effort(const Scene& scene) {
+    const double f = scene.pulse.centre_frequency;
+    double span = scene.sampling.window, orders = 0.0;
+    for (const RoundTarget& t : scene.targets) {
+        span = std::max(span, 2.0 * time_down(scene.ground, t.depth + t.radius, f).value);
+        const int layer = layer_at(scene.ground, t.depth);
+        const double k =
+            2.0 * pi * f / plane_wave(scene.ground.slabs[static_cast<std::size_t>(layer)].material, f).speed;
+        orders += 2.0 * std::min(k * t.radius + 4.0, 30.0) + 1.0;
+    }
+    return std::max(1.0, std::pow(f * span, 2.0) * (1.0 + std::pow(orders / 60.0, 3.0)));
 }
 
 }  // namespace gg

@@ -75,6 +75,12 @@ struct Separation {
     Value least_raw, least_focused;  ///< m, smallest gap at which they are two; Issue as in smallest_gap()
 };
 Separation separation_for(const Plan& plan, Polarisation polarisation = Polarisation::along);
+/// One half of it: the dip and the least gap of one reading.
+void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out);
+
+/// How much a section asks for, 1 and up; time goes with it, roughly. (Periods of the centre frequency in the
+/// record)^2, because frequencies and antenna positions both go with its length, times the work on the targets' orders.
+double section_effort(const Scene& scene);
 
 /// The plan with a neighbour put beside a lone target: what Pair asks about.
 Plan as_pair(Plan plan);

@@ -21,6 +21,8 @@ void header_ui(Screen& screen);
 void tabs_ui(Screen& screen);
 void strip_ui(Screen& screen);
 void picture_ui(Screen& screen, Grip& grip, Point pointer);
+/// Gain, field, layers, raw or focused: how Pair's section is looked at.
+void section_switches_ui(Screen& screen, Box row);
 /// The inputs that the view depends on most (phone, tablet).
 void view_inputs_ui(Screen& screen);
 /// Every input of a group ("ground", "target", ...), or of all groups when `group` is empty; gives the y below.

@@ -49,10 +49,15 @@ static void hint_ui(Screen& s, Grip& grip) {
 }
 
 void picture_ui(Screen& s, Grip& grip, Point pointer) {
-    const Box area = s.areas.picture;
+    Box area = s.areas.picture;
     Session& session = s.session;
     const ViewRow& view = views()[static_cast<std::size_t>(session.view.view)];
     s.canvas().box(area, s.colours.paper, 0);
+    if (view.view == View::pair && area.width > 200 && area.height > 4 * s.areas.row) {
+        const double row = std::min(s.areas.row, 44.0);
+        area.height -= row;
+        section_switches_ui(s, {area.x + 4, area.bottom(), area.width - 8, row});
+    }
     if (!(area.width > 60 && area.height > 60)) {
         grip = {};
         return;
@@ -64,6 +69,8 @@ void picture_ui(Screen& s, Grip& grip, Point pointer) {
     style.units = session.units();
     style.text = s.small;
     style.held = grip.field;
+    style.section = session.section;
+    style.look = session.view.look;
     s.canvas().push_clip(area);
     grip.figure = view.draw(s.canvas(), session.plan, session.answers, style);
     s.canvas().pop_clip();

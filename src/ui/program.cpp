@@ -10,6 +10,7 @@
 
 #include "paper/plan_file.hpp"
 #include "ui/parts.hpp"
+#include "ui/section_work.hpp"
 #include "ui/theme.hpp"
 #include "ui/typeface.hpp"
 
@@ -26,6 +27,7 @@ struct Program::State final : PointerOut {
     Scrolls scrolls;
     Finger finger;
     Grip grip;
+    SectionWork section;
     std::vector<Mark> marks;
     std::deque<std::string> presses;
     std::vector<double> font_sizes;
@@ -70,6 +72,8 @@ struct Program::State final : PointerOut {
     void keys();
     void move_focus(int by);
     void nudge(double by);
+    /// One step on Pair's section, where it is open.
+    void work_on_section();
     void draw(Screen& screen);
     void keep();
 };
@@ -304,6 +308,14 @@ static void notice_ui(Screen& s) {
     s.paragraph(box.x + 16, box.y + 10, width - 32, session.notice, {s.text, s.colours.paper});
 }
 
+void Program::State::work_on_section() {
+    session.section = nullptr;
+    if (session.view.view != View::pair || !session.stale.empty()) return;
+    section.step(session.plan, session.view.field, !grip.field.empty(), session.now);
+    session.section = section.section();
+    session.no_section = section.reason();
+}
+
 void Program::State::draw(Screen& screen) {
     const ImVec2 mouse = ImGui::GetIO().MousePos;
     const Point pointer{mouse.x / surface.pixel_ratio, mouse.y / surface.pixel_ratio};
@@ -383,6 +395,7 @@ void Program::frame(double now) {
     ImGui::NewFrame();
     s.keys();
     s.session.refresh();
+    s.work_on_section();
     s.draw(screen);
     ImGui::Render();
     // What a control changed is on the screen with its answers in the next frame.
@@ -408,6 +421,7 @@ double Program::wake_after() const {
         repeating)
         return 0.0;
     double due = std::min(s.finger.due(session.now), session.history.due(session.plan, session.now));
+    if (session.view.view == View::pair && session.stale.empty()) due = std::min(due, s.section.due(session.now));
     if (!(s.seen_plan == s.stored_plan)) due = std::min(due, std::max(0.0, s.changed_at + store_after - session.now));
     if (!session.notice.empty()) due = std::min(due, std::max(0.0, session.notice_until - session.now));
     return due;

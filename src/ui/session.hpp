@@ -36,6 +36,8 @@ struct ViewState {
     Edit edit;
     std::string focus;          ///< id of the control that keys act on
     bool formula_open = false;  ///< in the answer card
+    SectionLook look{};         ///< at Pair's section, and which way its antenna is turned
+    Polarisation field = Polarisation::along;
     bool operator==(const ViewState&) const = default;
 };
 
@@ -50,7 +52,9 @@ struct Session {
     std::string notice;  ///< a passing word at the bottom of the screen
     double notice_until = 0.0;
     double now = 0.0;
-    bool gesture = false;  ///< a drag or a held button is changing the plan
+    bool gesture = false;                  ///< a drag or a held button is changing the plan
+    const PairSection* section = nullptr;  ///< of `plan`, while Pair is open; null: `no_section` says why
+    std::string no_section;
 
     Session();
     /// Brings the answers up to the plan; does nothing where they are.

@@ -227,3 +227,17 @@ TEST_CASE("two are told apart at gaps above the measured least one and not below
     CHECK(separation_for(bars(1.1 * far.least_raw.value)).raw.apart());
     CHECK_FALSE(separation_for(bars(0.8 * far.least_raw.value)).raw.apart());
 }
+
+TEST_CASE("a longer record, and larger or more targets, take more effort") {
+    const Plan plan = bars(0.2);
+    const double effort = section_effort(scene_for(plan));
+    Plan other = plan;
+    other.target.depth = exactly(3.0);
+    other.pass.window = 160e-9;
+    CHECK(section_effort(scene_for(other)) > 10.0 * effort);
+    other = plan;
+    other.target.count = 6;
+    other.target.gap = 3.0;
+    other.target.size = 2.0;
+    CHECK(section_effort(scene_for(other)) > 10.0 * effort);
+}

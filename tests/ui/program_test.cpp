@@ -334,3 +334,47 @@ TEST_CASE("ears of a concave polygon cover its area, once") {
     }
     CHECK(area == doctest::Approx(10.0));  // 4 x 4 less the notch of base 4 and height 3
 }
+
+TEST_CASE("Pair shows the section, measures it once the plan rests, and then is still") {
+    Bench b;
+    b.press("view.pair");
+    b.wait(2.0);
+    CHECK(b.value("section.gain") == "Even gain");
+    CHECK(b.value("picture").find(" raw, ") != std::string::npos);
+    CHECK(std::isinf(b.program.wake_after()));
+    b.press("section.gain");
+    CHECK(b.value("section.gain") == "Strong gain");
+    b.press("section.layers");
+    CHECK(b.value("section.layers") == "With layers");
+    b.press("section.focused");
+    CHECK(b.value("section.focused") == "Focused");
+    b.press("section.field");
+    CHECK(b.value("section.field") == "Field across");
+    b.wait(2.0);
+    CHECK(b.value("picture").find(" raw, ") != std::string::npos);
+
+    // While a finger moves the gap nothing is measured; when it lifts, it is measured anew.
+    const Point grip = b.centre("handle.target.gap");
+    b.program.pointer_button(grip.x, grip.y, true, true);
+    b.frames(3);
+    b.program.pointer_move(grip.x + 20, grip.y, true);
+    b.frames(2);
+    CHECK(b.value("picture").find(" raw, ") == std::string::npos);
+    CHECK(b.value("picture").find("By travel times") != std::string::npos);
+    b.program.pointer_button(grip.x + 20, grip.y, false, true);
+    b.wait(2.0);
+    CHECK(b.value("picture").find(" raw, ") != std::string::npos);
+    CHECK(b.program.plan().target.gap > 0.4);
+}
+
+TEST_CASE("Pair without a section has no switches for it, and keeps its picture") {
+    Bench b;
+    Plan plan = read_plan(demos().front().json).plan;
+    plan.target.shape = TargetShape::flat;
+    b.program.opened("flat", write_plan(plan));
+    b.press("view.pair");
+    b.wait(6.0);  // the notice of opening goes
+    CHECK(b.value("section.gain") == "(not there)");
+    CHECK(b.value("picture").find("Two neighbours") != std::string::npos);
+    CHECK(std::isinf(b.program.wake_after()));
+}
