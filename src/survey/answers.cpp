@@ -41,8 +41,8 @@ Answer& add(Answers& answers, Group group, std::string key, std::string name, Qu
     return answers.list.back();
 }
 
-Issue ground_issue(const Scene& scene) {
-    const Case& c = scene.likely();
+Issue ground_issue(const Setting& setting) {
+    const Case& c = setting.likely();
     Issue worst = Issue::none;
     for (int i = 0; i <= c.layer; ++i) {
         const Issue issue = c.ground->waves[i].issue;
@@ -62,22 +62,22 @@ const Answer* Answers::find(std::string_view key) const {
 Answers answers_for(const Plan& plan) {
     const Sane sane = make_sane(plan);
     const Cases cases = cases_of(sane.plan);
-    const Scene scene{sane.plan, cases, band_of(sane.plan.antenna.pulse, 10.0)};
+    const Setting setting{sane.plan, cases, band_of(sane.plan.antenna.pulse, 10.0)};
     Answers answers;
     answers.list.reserve(80);
     answers.faults = faults_of(plan);
-    add_wave(scene, answers);
-    const Patch patch = add_patch(scene, answers);
-    add_pulse(scene, answers);
-    add_downwards(scene, answers);
-    add_sideways(scene, answers);
-    add_smallest(scene, answers);
-    add_pass(scene, patch, answers);
-    add_lanes(scene, patch, answers);
-    draw_beam(scene, patch, answers);
-    draw_pulse(scene, answers);
+    add_wave(setting, answers);
+    const Patch patch = add_patch(setting, answers);
+    add_pulse(setting, answers);
+    add_downwards(setting, answers);
+    add_sideways(setting, answers);
+    add_smallest(setting, answers);
+    add_pass(setting, patch, answers);
+    add_lanes(setting, patch, answers);
+    draw_beam(setting, patch, answers);
+    draw_pulse(setting, answers);
 
-    const Issue issue = ground_issue(scene);
+    const Issue issue = ground_issue(setting);
     for (Answer& a : answers.list) {
         // A layer's own answers carry its own issue; what only counts lines does not rest on the ground.
         if (issue == Issue::none || a.key.starts_with("layer.") || a.quantity == Quantity::count) continue;

@@ -18,11 +18,11 @@ struct Runner {
 
 }  // namespace
 
-void draw_beam(const Scene& scene, const Patch& patch, Answers& answers) {
+void draw_beam(const Setting& setting, const Patch& patch, Answers& answers) {
     BeamPicture& beam = answers.beam;
-    const Case& c = scene.likely();
-    const Plan& plan = scene.plan;
-    const double f = scene.frequency();
+    const Case& c = setting.likely();
+    const Plan& plan = setting.plan;
+    const double f = setting.frequency();
     beam.patch_along = patch.along;
     beam.patch_across = patch.across;
     beam.wavelength_at_target = c.wave().wavelength;

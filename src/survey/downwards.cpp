@@ -64,11 +64,11 @@ Value smallest_delay(const EchoPulse& echo, double dip) {
     return finite(0.5 * (near + far));
 }
 
-void add_downwards(const Scene& scene, Answers& answers) {
-    const Case& c = scene.likely();
-    const double f = scene.frequency();
+void add_downwards(const Setting& setting, Answers& answers) {
+    const Case& c = setting.likely();
+    const double f = setting.frequency();
     Answer& a = add(answers, Group::downwards, "apart.down", "Told apart downwards", Quantity::length,
-                    spread_over(scene.cases, [](const Case& k) {
+                    spread_over(setting.cases, [](const Case& k) {
                         return 0.5 * k.wave().speed * smallest_delay(k.echo, apart_dip).value;
                     }));
     a.why = "Two thin layers one above the other show as two when they are " + token(a.likely.value, Quantity::length) +
@@ -83,7 +83,7 @@ void add_downwards(const Scene& scene, Answers& answers) {
     const double v = c.wave().speed;
     a.rules = {{"a quarter of the wavelength", 0.25 * v / f, "Annan & Cosway 1992; geoscixyz GPG, GPR survey data"},
                {"pulse width x speed / 2", 0.5 * v * c.echo.width, "geometry, with the returned pulse's width"}};
-    const double asked = scene.plan.need.depth_accuracy;
+    const double asked = setting.plan.need.depth_accuracy;
     if (asked > 0.0) {
         a.grade = a.high <= asked ? Grade::good : a.likely.value <= asked ? Grade::thin : Grade::poor;
         if (a.grade != Grade::good) {

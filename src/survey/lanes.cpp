@@ -7,8 +7,8 @@
 
 namespace gg {
 
-void add_lanes(const Scene& scene, const Patch& patch, Answers& answers) {
-    const Plan& plan = scene.plan;
+void add_lanes(const Setting& setting, const Patch& patch, Answers& answers) {
+    const Plan& plan = setting.plan;
     LanesPicture& picture = answers.lanes;
     const double bridge = 2.0 * patch.across;
     const Walk walk = walk_of(plan);
@@ -70,8 +70,8 @@ void add_lanes(const Scene& scene, const Patch& patch, Answers& answers) {
     mend(hits);
 
     Answer& whole = add(answers, Group::lanes, "lanes.picture", "Gap a picture bridges", Quantity::length,
-                        spread_over(scene.cases, [&](const Case& k) {
-                            const Case& c = scene.likely();
+                        spread_over(setting.cases, [&](const Case& k) {
+                            const Case& c = setting.likely();
                             return bridge * std::sqrt(k.wave().wavelength * k.depth / (c.wave().wavelength * c.depth));
                         }));
     whole.grade = grade;
@@ -85,7 +85,7 @@ void add_lanes(const Scene& scene, const Patch& patch, Answers& answers) {
     whole.formula =
         "Width of the lit patch across the line; a picture blurred by it needs two looks in that width (Nyquist) to "
         "stand, and breaks up when there is less than one.";
-    whole.rules = {{"a quarter of the wavelength, for a full picture", 0.25 * scene.likely().wave().wavelength,
+    whole.rules = {{"a quarter of the wavelength, for a full picture", 0.25 * setting.likely().wave().wavelength,
                     "Grasmueck, Weger & Horstmeyer 2005, from memory"}};
     mend(whole);
 

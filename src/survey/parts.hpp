@@ -7,7 +7,7 @@
 namespace gg {
 
 /// What every part reads.
-struct Scene {
+struct Setting {
     const Plan& plan;  ///< sane
     const Cases& cases;
     Band band;  ///< of the sent pulse, -10 dB
@@ -46,22 +46,22 @@ inline Spread just(double x) {
 Answer& add(Answers& answers, Group group, std::string key, std::string name, Quantity quantity, const Spread& spread);
 
 /// Carries the issue of the ground's models over to an answer that rests on them.
-Issue ground_issue(const Scene& scene);
+Issue ground_issue(const Setting& setting);
 
 /// What the parts share beyond the plan: computed once.
 struct Patch {
     double along = 0.0, across = 0.0;  ///< half-widths, m
 };
 
-void add_wave(const Scene& scene, Answers& answers);
-Patch add_patch(const Scene& scene, Answers& answers);
-void add_pulse(const Scene& scene, Answers& answers);
-void add_downwards(const Scene& scene, Answers& answers);
-void add_sideways(const Scene& scene, Answers& answers);
-void add_smallest(const Scene& scene, Answers& answers);
-void add_pass(const Scene& scene, const Patch& patch, Answers& answers);
-void add_lanes(const Scene& scene, const Patch& patch, Answers& answers);
-void draw_beam(const Scene& scene, const Patch& patch, Answers& answers);
-void draw_pulse(const Scene& scene, Answers& answers);
+void add_wave(const Setting& setting, Answers& answers);
+Patch add_patch(const Setting& setting, Answers& answers);
+void add_pulse(const Setting& setting, Answers& answers);
+void add_downwards(const Setting& setting, Answers& answers);
+void add_sideways(const Setting& setting, Answers& answers);
+void add_smallest(const Setting& setting, Answers& answers);
+void add_pass(const Setting& setting, const Patch& patch, Answers& answers);
+void add_lanes(const Setting& setting, const Patch& patch, Answers& answers);
+void draw_beam(const Setting& setting, const Patch& patch, Answers& answers);
+void draw_pulse(const Setting& setting, Answers& answers);
 
 }  // namespace gg

@@ -16,7 +16,7 @@ double slowest(const Case& c) {
 }
 
 /// Depth that a whole echo must fit in.
-double deepest(const Scene& scene, const Case& c) { return std::max(c.depth, scene.plan.need.deepest); }
+double deepest(const Setting& setting, const Case& c) { return std::max(c.depth, setting.plan.need.deepest); }
 
 double arrival_at(const Case& c, double depth) { return 2.0 * leg_to(c.path_to(depth), 0.5 * c.separation).time; }
 
@@ -34,11 +34,12 @@ double reach_in(const Case& c, double time) {
     return z;
 }
 
-void step_answers(const Scene& scene, const Patch& patch, Answers& answers) {
-    const Case& c = scene.likely();
-    const double f = scene.frequency(), chosen = scene.plan.pass.step;
-    Answer& step = add(answers, Group::pass, "pass.step", "Largest step", Quantity::small_length,
-                       spread_over(scene.cases, [&](const Case& k) { return 0.25 * slowest(k) / scene.band.high; }));
+void step_answers(const Setting& setting, const Patch& patch, Answers& answers) {
+    const Case& c = setting.likely();
+    const double f = setting.frequency(), chosen = setting.plan.pass.step;
+    Answer& step =
+        add(answers, Group::pass, "pass.step", "Largest step", Quantity::small_length,
+            spread_over(setting.cases, [&](const Case& k) { return 0.25 * slowest(k) / setting.band.high; }));
     const double rule = 0.25 * slowest(c) / f;
     step.grade = chosen <= step.likely.value ? Grade::good : chosen <= rule ? Grade::thin : Grade::poor;
     step.why = std::string("A trace every ") + token(chosen, Quantity::small_length) +
@@ -58,7 +59,7 @@ void step_answers(const Scene& scene, const Patch& patch, Answers& answers) {
     }
 
     Answer& hits = add(answers, Group::pass, "pass.hits", "Traces across the lit patch", Quantity::count,
-                       spread_over(scene.cases, [&](const Case& k) {
+                       spread_over(setting.cases, [&](const Case& k) {
                            // The patch goes with the root of wavelength times depth; close enough for a count's range.
                            const double scale =
                                std::sqrt(k.wave().wavelength * k.depth / (c.wave().wavelength * c.depth));
@@ -77,14 +78,14 @@ void step_answers(const Scene& scene, const Patch& patch, Answers& answers) {
     }
 }
 
-void window_answers(const Scene& scene, Answers& answers) {
-    const Case& c = scene.likely();
-    const double chosen = scene.plan.pass.window;
-    Answer& window =
-        add(answers, Group::pass, "pass.window", "Time window needed", Quantity::time,
-            spread_over(scene.cases, [&](const Case& k) { return arrival_at(k, deepest(scene, k)) + k.echo.tail; }));
+void window_answers(const Setting& setting, Answers& answers) {
+    const Case& c = setting.likely();
+    const double chosen = setting.plan.pass.window;
+    Answer& window = add(
+        answers, Group::pass, "pass.window", "Time window needed", Quantity::time,
+        spread_over(setting.cases, [&](const Case& k) { return arrival_at(k, deepest(setting, k)) + k.echo.tail; }));
     window.grade = chosen >= window.high ? Grade::good : chosen >= window.likely.value ? Grade::thin : Grade::poor;
-    const double rule = 1.3 * 2.0 * deepest(scene, c) / c.mean_speed();
+    const double rule = 1.3 * 2.0 * deepest(setting, c) / c.mean_speed();
     const std::string said = token(chosen, Quantity::time), need = token(window.likely.value, Quantity::time);
     if (chosen <= c.echo.width) {
         window.why = "A window of " + said + " is shorter than the pulse itself: no whole echo fits in it; " + need +
@@ -107,8 +108,8 @@ void window_answers(const Scene& scene, Answers& answers) {
     }
 
     Answer& reach = add(answers, Group::pass, "pass.reach", "Depth the window reaches", Quantity::length,
-                        spread_over(scene.cases, [&](const Case& k) { return reach_in(k, chosen - k.echo.tail); }));
-    const double goal = deepest(scene, c);
+                        spread_over(setting.cases, [&](const Case& k) { return reach_in(k, chosen - k.echo.tail); }));
+    const double goal = deepest(setting, c);
     reach.grade = reach.low >= goal ? Grade::good : reach.likely.value >= goal ? Grade::thin : Grade::poor;
     if (reach.likely.value > 0.0) {
         reach.why = "A whole echo fits into the window down to " + token(reach.likely.value, Quantity::length) + ".";
@@ -121,11 +122,11 @@ void window_answers(const Scene& scene, Answers& answers) {
     answers.pulse.window_depth = reach_in(c, chosen);
 }
 
-void sample_answers(const Scene& scene, Answers& answers) {
-    const Case& c = scene.likely();
-    const double f = scene.frequency(), window = scene.plan.pass.window;
-    const int samples = scene.plan.pass.samples;
-    const double chosen = window / samples, nyquist = 0.5 / scene.band.high, six = 1.0 / (6.0 * f);
+void sample_answers(const Setting& setting, Answers& answers) {
+    const Case& c = setting.likely();
+    const double f = setting.frequency(), window = setting.plan.pass.window;
+    const int samples = setting.plan.pass.samples;
+    const double chosen = window / samples, nyquist = 0.5 / setting.band.high, six = 1.0 / (6.0 * f);
     const int least = samples_for(window, nyquist), advised = samples_for(window, six);
     const auto mend = [&](Answer& a) {
         if (a.grade == Grade::good) return;
@@ -135,8 +136,7 @@ void sample_answers(const Scene& scene, Answers& answers) {
     };
     const Grade grade = chosen <= six * (1.0 + 1e-9) ? Grade::good : chosen <= nyquist ? Grade::thin : Grade::poor;
 
-    Answer& interval =
-        add(answers, Group::pass, "pass.interval", "Sampling interval", Quantity::time, just(nyquist));
+    Answer& interval = add(answers, Group::pass, "pass.interval", "Sampling interval", Quantity::time, just(nyquist));
     interval.grade = grade;
     interval.why =
         grade == Grade::poor
@@ -157,12 +157,12 @@ void sample_answers(const Scene& scene, Answers& answers) {
     mend(count);
 
     Answer& cycle = add(answers, Group::pass, "pass.per_cycle", "Samples in the shortest period", Quantity::ratio,
-                        just(1.0 / (scene.band.high * chosen)));
+                        just(1.0 / (setting.band.high * chosen)));
     cycle.grade = grade;
     cycle.why = "The shortest period in the pulse gets " + token(cycle.likely.value, Quantity::ratio) +
                 " samples; below two it folds over.";
     cycle.formula = "1 / (upper -10 dB edge x interval).";
-    cycle.rules = {{"six a period of the centre frequency, counted at the upper edge", 6.0 * f / scene.band.high,
+    cycle.rules = {{"six a period of the centre frequency, counted at the upper edge", 6.0 * f / setting.band.high,
                     "Annan & Cosway 1992, from memory"},
                    {"two, Nyquist", 2.0, "Nyquist"}};
     mend(cycle);
@@ -170,7 +170,7 @@ void sample_answers(const Scene& scene, Answers& answers) {
     const RebuildError likely = rebuild_error(c.echo, chosen);
     // The finer the returned pulse, the more it asks: its ends over the unknown are those of its frequency.
     const Case *low = &c, *high = &c;
-    for (const Case& k : scene.cases.all) {
+    for (const Case& k : setting.cases.all) {
         if (k.echo.frequency < low->echo.frequency) low = &k;
         if (k.echo.frequency > high->echo.frequency) high = &k;
     }
@@ -181,8 +181,7 @@ void sample_answers(const Scene& scene, Answers& answers) {
         spread.low = std::min(spread.low, e);
         spread.high = std::max(spread.high, e);
     }
-    Answer& error =
-        add(answers, Group::pass, "pass.error", "Rebuilding error", Quantity::fraction, spread);
+    Answer& error = add(answers, Group::pass, "pass.error", "Rebuilding error", Quantity::fraction, spread);
     error.grade = error.high <= 0.02 ? Grade::good : error.likely.value <= 0.1 ? Grade::thin : Grade::poor;
     error.why = "Rebuilt from its samples the echo is at worst " + token(likely.band_limited, Quantity::fraction) +
                 " off; its dots joined by straight lines are " + token(likely.joined, Quantity::fraction) + " off.";
@@ -195,10 +194,10 @@ void sample_answers(const Scene& scene, Answers& answers) {
 
 }  // namespace
 
-void add_pass(const Scene& scene, const Patch& patch, Answers& answers) {
-    step_answers(scene, patch, answers);
-    window_answers(scene, answers);
-    sample_answers(scene, answers);
+void add_pass(const Setting& setting, const Patch& patch, Answers& answers) {
+    step_answers(setting, patch, answers);
+    window_answers(setting, answers);
+    sample_answers(setting, answers);
 }
 
 }  // namespace gg

@@ -29,13 +29,13 @@ double footprint_rule(double depth, double wavelength, double permittivity) {
     return 0.25 * wavelength + depth / std::sqrt(permittivity + 1.0);
 }
 
-Patch add_patch(const Scene& scene, Answers& answers) {
-    const double f = scene.frequency();
+Patch add_patch(const Setting& setting, Answers& answers) {
+    const double f = setting.frequency();
     std::vector<Patch> all;
-    for (const Case& c : scene.cases.all) all.push_back(lit_patch(c.path, c.separation, f));
-    const auto of = [&](const Case& c) -> const Patch& { return all[&c - scene.cases.all.data()]; };
+    for (const Case& c : setting.cases.all) all.push_back(lit_patch(c.path, c.separation, f));
+    const auto of = [&](const Case& c) -> const Patch& { return all[&c - setting.cases.all.data()]; };
 
-    const Case& c = scene.likely();
+    const Case& c = setting.likely();
     const double v = c.mean_speed(), lambda = v / f, K = std::max(1.0, std::pow(speed_of_light / v, 2));
     const double fresnel = 2.0 * fresnel_rule(c.depth, lambda), A = footprint_rule(c.depth, lambda, K);
     const std::string source =
@@ -46,7 +46,7 @@ Patch add_patch(const Scene& scene, Answers& answers) {
         "shortest, transmitter and receiver apart. ";
 
     Answer& along = add(answers, Group::patch, "patch.along", "Lit patch along the line", Quantity::length,
-                        spread_over(scene.cases, [&](const Case& k) { return 2.0 * of(k).along; }));
+                        spread_over(setting.cases, [&](const Case& k) { return 2.0 * of(k).along; }));
     along.why = "At the target's depth one trace sees a patch " + token(along.likely.value, Quantity::length) +
                 " long, not a point.";
     along.formula = how +
@@ -56,7 +56,7 @@ Patch add_patch(const Scene& scene, Answers& answers) {
                    {"footprint, 2 (wavelength/4 + depth/sqrt(K+1))", 2.0 * A, source}};
 
     Answer& across = add(answers, Group::patch, "patch.across", "Lit patch across the line", Quantity::length,
-                         spread_over(scene.cases, [&](const Case& k) { return 2.0 * of(k).across; }));
+                         spread_over(setting.cases, [&](const Case& k) { return 2.0 * of(k).across; }));
     across.why = "Across the line the patch is " + token(across.likely.value, Quantity::length) +
                  " wide; what lies farther aside is for the next line.";
     across.formula = how +
@@ -67,11 +67,11 @@ Patch add_patch(const Scene& scene, Answers& answers) {
         {"footprint's short width, wavelength/4 + depth/sqrt(K+1)", A, source}};
 
     // Graded only against what is to be kept apart: a patch is no fault by itself.
-    if (scene.plan.need.closest > 0.0) {
+    if (setting.plan.need.closest > 0.0) {
         for (const char* key : {"patch.along", "patch.across"}) {
             for (Answer& a : answers.list) {
                 if (a.key != key) continue;
-                const double ratio = a.likely.value / scene.plan.need.closest;
+                const double ratio = a.likely.value / setting.plan.need.closest;
                 a.grade = ratio <= 1.0 ? Grade::good : ratio <= 2.0 ? Grade::thin : Grade::poor;
             }
         }

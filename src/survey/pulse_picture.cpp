@@ -5,12 +5,12 @@
 
 namespace gg {
 
-void draw_pulse(const Scene& scene, Answers& answers) {
+void draw_pulse(const Setting& setting, Answers& answers) {
     PulsePicture& picture = answers.pulse;
-    const Case& c = scene.likely();
-    const Pass& pass = scene.plan.pass;
+    const Case& c = setting.likely();
+    const Pass& pass = setting.plan.pass;
     const EchoPulse& echo = c.echo;
-    picture.sent = sent_pulse(scene.plan.antenna.pulse);
+    picture.sent = sent_pulse(setting.plan.antenna.pulse);
     picture.amplitude = std::pow(10.0, -echo.loss / 20.0);
 
     const double arrival = c.arrival();

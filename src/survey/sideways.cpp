@@ -95,11 +95,11 @@ double lateral_rule(double speed, double range, double width) {
     return std::sqrt(0.5 * speed * range * width);
 }
 
-void add_sideways(const Scene& scene, Answers& answers) {
-    const Case& c = scene.likely();
-    const double f = scene.frequency(), R = scene.radius(), gap = scene.plan.target.gap;
+void add_sideways(const Setting& setting, Answers& answers) {
+    const Case& c = setting.likely();
+    const double f = setting.frequency(), R = setting.radius(), gap = setting.plan.target.gap;
     Answer& a = add(answers, Group::sideways, "apart.sideways", "Told apart sideways", Quantity::length,
-                    spread_over(scene.cases, [&](const Case& k) { return smallest_gap(k, R).value; }));
+                    spread_over(setting.cases, [&](const Case& k) { return smallest_gap(k, R).value; }));
 
     if (const Value least = smallest_gap(c, R); !least.ok()) a.likely.issue = least.issue;
     PairPicture& pair = answers.pair;
@@ -142,8 +142,8 @@ void add_sideways(const Scene& scene, Answers& answers) {
     a.rules = {{"half the wavelength", 0.5 * v / f, "common practice, no source"},
                {"sqrt(speed x depth x pulse width / 2)", lateral_rule(c.mean_speed(), c.depth, 1.0 / f),
                 "Annan & Cosway 1992, from memory"}};
-    const double asked = scene.plan.need.closest;
-    const double goal = asked > 0.0 ? asked : scene.plan.target.count > 1 ? gap : 0.0;
+    const double asked = setting.plan.need.closest;
+    const double goal = asked > 0.0 ? asked : setting.plan.target.count > 1 ? gap : 0.0;
     const std::string least = token(a.likely.value, Quantity::length);
     if (!(goal > 0.0)) {
         a.why = "Two such targets side by side would show as two from " + least + " centre to centre.";

@@ -29,13 +29,13 @@ void time_it(const char* what, F f) {
 void parts_of(const Plan& given) {
     const Sane sane = make_sane(given);
     const Cases cases = cases_of(sane.plan);
-    const Scene scene{sane.plan, cases, band_of(sane.plan.antenna.pulse, 10.0)};
+    const Setting setting{sane.plan, cases, band_of(sane.plan.antenna.pulse, 10.0)};
     const Case& c = cases.likely();
     std::printf("  (%zu grounds and depths)\n", cases.all.size());
     time_it("cases", [&] { cases_of(sane.plan); });
     time_it("one echo", [&] { EchoPulse(*c.ground->spectrum, c.ground->stack, c.depth, c.height); });
-    time_it("one lit patch", [&] { lit_patch(c.path, c.separation, scene.frequency()); });
-    time_it("one smallest gap", [&] { smallest_gap(c, scene.radius()); });
+    time_it("one lit patch", [&] { lit_patch(c.path, c.separation, setting.frequency()); });
+    time_it("one smallest gap", [&] { smallest_gap(c, setting.radius()); });
     const auto part = [&](const char* name, auto f) {
         time_it(name, [&] {
             Answers answers;
@@ -43,16 +43,16 @@ void parts_of(const Plan& given) {
             f(answers);
         });
     };
-    const Patch patch = lit_patch(c.path, c.separation, scene.frequency());
-    part("wave", [&](Answers& a) { add_wave(scene, a); });
-    part("lit patch", [&](Answers& a) { add_patch(scene, a); });
-    part("pulse", [&](Answers& a) { add_pulse(scene, a); });
-    part("downwards", [&](Answers& a) { add_downwards(scene, a); });
-    part("sideways", [&](Answers& a) { add_sideways(scene, a); });
-    part("pass", [&](Answers& a) { add_pass(scene, patch, a); });
-    part("lanes", [&](Answers& a) { add_lanes(scene, patch, a); });
-    part("beam picture", [&](Answers& a) { draw_beam(scene, patch, a); });
-    part("pulse picture", [&](Answers& a) { draw_pulse(scene, a); });
+    const Patch patch = lit_patch(c.path, c.separation, setting.frequency());
+    part("wave", [&](Answers& a) { add_wave(setting, a); });
+    part("lit patch", [&](Answers& a) { add_patch(setting, a); });
+    part("pulse", [&](Answers& a) { add_pulse(setting, a); });
+    part("downwards", [&](Answers& a) { add_downwards(setting, a); });
+    part("sideways", [&](Answers& a) { add_sideways(setting, a); });
+    part("pass", [&](Answers& a) { add_pass(setting, patch, a); });
+    part("lanes", [&](Answers& a) { add_lanes(setting, patch, a); });
+    part("beam picture", [&](Answers& a) { draw_beam(setting, patch, a); });
+    part("pulse picture", [&](Answers& a) { draw_pulse(setting, a); });
 }
 
 }  // namespace
