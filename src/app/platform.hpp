@@ -10,10 +10,10 @@ namespace gg::platform {
 /// @param plan_file  plan to open, or empty for the last one kept on this device, else the first demo
 struct Options {
     std::string plan_file;
-    std::string shot_file;        ///< desktop: write a PPM picture of the window here, then close; empty: not
-    std::string script_file;      ///< desktop: pointer and key script to play first (tests)
+    std::string shot_file;    ///< desktop: write a PPM picture of the window here, then close; empty: not
+    std::string script_file;  ///< desktop: pointer and key script to play first (tests)
     int width = 1440, height = 900;
-    double scale = 0.0;           ///< 0: the monitor's
+    double scale = 0.0;  ///< 0: the monitor's
     bool dark = false;
 };
 int run_window(const Options& options);

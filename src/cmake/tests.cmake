@@ -14,6 +14,8 @@ foreach(room wave echo survey draw paper ui app)
   add_executable(test_${room} ${sources})
   target_link_libraries(test_${room} PRIVATE gg_test_main gg_${room})
   target_include_directories(test_${room} PRIVATE ${CMAKE_SOURCE_DIR}/tests)
+  # Light optimisation: the checks run in no time anyway, and build twice as fast.
+  target_compile_options(test_${room} PRIVATE $<$<CONFIG:Release>:-O1>)
   target_compile_definitions(test_${room} PRIVATE GG_SOURCE_DIR="${CMAKE_SOURCE_DIR}")
   add_test(NAME ${room} COMMAND test_${room})
 endforeach()

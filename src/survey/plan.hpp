@@ -27,33 +27,33 @@ enum class Filling : std::uint8_t { metal, plastic_air, plastic_water, concrete,
 struct Target {
     TargetShape shape = TargetShape::round;
     Filling filling = Filling::plastic_water;
-    Matter own;            ///< used where filling is Filling::own
-    double size = 0.11;    ///< m: diameter, or thickness when flat
+    Matter own;                  ///< used where filling is Filling::own
+    double size = 0.11;          ///< m: diameter, or thickness when flat
     Range depth = exactly(0.9);  ///< m, surface to the target's top
-    int count = 2;         ///< how many of them side by side, 1 to 12
-    double gap = 0.4;      ///< m, centre to centre
-    double length = 20.0;  ///< m, along its axis
-    double bearing = 0.0;  ///< rad, clockwise from the site's north (+y), 0 to pi
+    int count = 2;               ///< how many of them side by side, 1 to 12
+    double gap = 0.4;            ///< m, centre to centre
+    double length = 20.0;        ///< m, along its axis
+    double bearing = 0.0;        ///< rad, clockwise from the site's north (+y), 0 to pi
     bool operator==(const Target&) const = default;
 };
 
 struct Antenna {
     PulseShape pulse;
-    double separation = 0.16;       ///< m, transmitter to receiver
-    double height = 0.0;            ///< m, above the surface
-    double dynamic_range = 120.0;   ///< dB, of one trace
-    int channels = 1;               ///< side by side
-    double channel_spacing = 0.0;   ///< m, across the direction of travel
+    double separation = 0.16;      ///< m, transmitter to receiver
+    double height = 0.0;           ///< m, above the surface
+    double dynamic_range = 120.0;  ///< dB, of one trace
+    int channels = 1;              ///< side by side
+    double channel_spacing = 0.0;  ///< m, across the direction of travel
     bool operator==(const Antenna&) const = default;
 };
 
 /// What is keyed into the instrument.
 struct Pass {
-    double step = 0.02;        ///< m between traces
-    double window = 60e-9;     ///< s
-    int samples = 512;         ///< per trace
-    int stacks = 1;            ///< traces averaged into one
-    double trace_rate = 100.0; ///< traces per second, before stacking
+    double step = 0.02;         ///< m between traces
+    double window = 60e-9;      ///< s
+    int samples = 512;          ///< per trace
+    int stacks = 1;             ///< traces averaged into one
+    double trace_rate = 100.0;  ///< traces per second, before stacking
     bool operator==(const Pass&) const = default;
 };
 
@@ -65,9 +65,9 @@ struct SitePoint {
 /// What is walked.
 struct Lanes {
     std::vector<SitePoint> outline{{0, 0}, {20, 0}, {20, 15}, {0, 15}};  ///< simple polygon
-    double spacing = 0.5;       ///< m between lines (between swaths' same channel for an array)
-    bool both_ways = false;     ///< a second set of lines at right angles
-    double bearing = 0.0;       ///< rad, direction of travel clockwise from north
+    double spacing = 0.5;    ///< m between lines (between swaths' same channel for an array)
+    bool both_ways = false;  ///< a second set of lines at right angles
+    double bearing = 0.0;    ///< rad, direction of travel clockwise from north
     bool operator==(const Lanes&) const = default;
 };
 
