@@ -25,3 +25,6 @@ endif()
 # How long the answers take; prints, checks nothing.
 add_executable(bench_native EXCLUDE_FROM_ALL ${CMAKE_SOURCE_DIR}/tests/bench/bench.cpp)
 target_link_libraries(bench_native PRIVATE gg_paper)
+add_executable(bench_section EXCLUDE_FROM_ALL ${CMAKE_SOURCE_DIR}/tests/bench/section.cpp)
+target_link_libraries(bench_section PRIVATE gg_echo)
+target_compile_definitions(bench_section PRIVATE GG_SOURCE_DIR="${CMAKE_SOURCE_DIR}")
