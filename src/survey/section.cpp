@@ -13,10 +13,12 @@ namespace gg {
 namespace {
 
 constexpr int most_traces = 512, coarse_traces = 64, most_exact_traces = 4096;
-constexpr double aperture = 1.2;     // of the axis' depth, to either side
-constexpr double pipe_wall = 0.05;   // of the diameter
-constexpr double most_gain = 1e4;    // 80 dB
-constexpr double tail_widths = 3.0;  // of the sent pulse, kept after the last arrival
+constexpr double coarse_care = 0.1;   // of the engine's cut-offs: 1 % of the strongest echo, in 60 % of the time
+constexpr double coarse_flank = 0.5;  // of the line's far end, to which a coarse record follows the hyperbolas
+constexpr double aperture = 1.2;      // of the axis' depth, to either side
+constexpr double pipe_wall = 0.05;    // of the diameter
+constexpr double most_gain = 1e4;     // 80 dB
+constexpr double tail_widths = 3.0;   // of the sent pulse, kept after the last arrival
 
 RoundTarget round_target(const Target& target) {
     RoundTarget out;
@@ -78,6 +80,7 @@ void lay_time(Scene& scene, const Target& target, const Pass& pass, Detail detai
     if (detail == Detail::exact) return;
     double farthest = 0.0;
     for (const RoundTarget& t : scene.targets) farthest = std::max(farthest, std::abs(t.x) - s.first);
+    if (detail == Detail::coarse) farthest *= coarse_flank;
     const double latest = 2.0 * ray_to(scene.ground, scene.height, farthest + 0.5 * scene.separation,
                                        target.depth.likely, scene.pulse.centre_frequency)
                                     .time +
@@ -145,7 +148,7 @@ Section section_for(const Plan& plan, Detail detail, Polarisation polarisation) 
         section.reason = std::move(fault);
         return section;
     }
-    return section_of(scene_for(plan, detail, polarisation));
+    return section_of(scene_for(plan, detail, polarisation), detail == Detail::coarse ? coarse_care : 1.0);
 }
 
 std::vector<double> record_of(const Section& section, SectionParts parts) {

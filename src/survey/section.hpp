@@ -12,7 +12,7 @@
 namespace gg {
 
 enum class Detail : std::uint8_t {
-    coarse,  ///< while something is dragged: fewer traces, so the picture is rougher than the pass would make it
+    coarse,  ///< while something is dragged: fewer traces and less time than full, to 1 % of the strongest echo
     full,    ///< as keyed in, over the stretch and the time that hold the hyperbolas
     exact    ///< as keyed in: every trace of that stretch, the whole window
 };

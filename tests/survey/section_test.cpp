@@ -241,3 +241,26 @@ TEST_CASE("a longer record, and larger or more targets, take more effort") {
     other.target.size = 2.0;
     CHECK(section_effort(scene_for(other)) > 10.0 * effort);
 }
+
+TEST_CASE("the coarse section is the full one to a percent, where both have a trace and a sample") {
+    Plan plan = three_layers();
+    plan.pass.step = 0.01;
+    const Section full = section_for(plan), coarse = section_for(plan, Detail::coarse);
+    REQUIRE((full.ok() && coarse.ok()));
+    CHECK(coarse.samples < full.samples);
+    CHECK(coarse.dt == doctest::Approx(full.dt));
+    double strongest = 0.0, worst = 0.0;
+    int compared = 0;
+    for (int i = 0; i < coarse.traces; ++i) {
+        const double place = (coarse.first + i * coarse.step - full.first) / full.step;
+        const int trace = static_cast<int>(std::lround(place));
+        if (std::abs(place - trace) > 1e-6) continue;
+        ++compared;
+        for (int k = 0; k < coarse.samples; ++k) {
+            strongest = std::max(strongest, std::abs(full.at(trace, k)));
+            worst = std::max(worst, std::abs(full.at(trace, k) - coarse.at(i, k)));
+        }
+    }
+    CHECK(compared == coarse.traces);
+    CHECK(worst < 0.01 * strongest);
+}
