@@ -7,7 +7,7 @@ namespace {
 
 // Measured on the demo plans: 0.3 to 0.7 ms each on one core. Past the first no section is begun, past the second no
 // search for the least gap, which takes about ten sections.
-constexpr double most_effort = 2000.0, most_search_effort = 600.0;
+constexpr double most_effort = 2000.0, most_search_effort = 1000.0;
 constexpr double rest = 0.5;  // s without a change before a search begins
 
 /// The plan with all that the section does not depend on left out.
