@@ -1,109 +1,264 @@
 #include "echo/grid.hpp"
 
-#include <Eigen/Core>
 #include <algorithm>
+#include <array>
 #include <cmath>
+
+#include "echo/lanes.hpp"
 
 namespace gg {
 namespace {
 
-constexpr double oversampling = 1.35;
+constexpr double oversampling = 1.5;
 constexpr int taps = 16;
+constexpr int lane = 8;  // two Fours
 
-/// Rows of positions, real and imaginary parts apart so that the compiler can work on several positions at once.
-constexpr int lane = 8;
+int in_lanes(int n) { return (n + lane - 1) / lane * lane; }
+
+/// Windowed-sinc weights of the points floor - 7 .. floor + 8 for a place `part` (0..1) past the floor.
+std::array<double, taps> weights(double part) {
+    constexpr double half = taps / 2, shape = pi * half * (1.0 - 1.0 / oversampling);
+    const double wave = std::sin(pi * part) / pi;
+    std::array<double, taps> out{};
+    for (int i = 0; i < taps; ++i) {
+        const int tap = i + 1 - taps / 2;
+        const double d = part - tap, inside = 1.0 - d * d / (half * half);
+        if (!(inside > 0.0)) continue;
+        const double sinc = std::fabs(d) < 1e-9 ? 1.0 : ((tap & 1) ? -wave : wave) / d;
+        out[i] = sinc * std::exp(shape * (std::sqrt(inside) - 1.0));
+    }
+    return out;
+}
+
+/// The same for many places, between entries of a table: linear in 1/512 of a point is good to 5e-6.
+struct Weights {
+    static constexpr int count = 512;
+    std::array<std::array<double, taps>, count + 1> at;
+    Weights() {
+        for (int i = 0; i <= count; ++i) at[i] = weights(static_cast<double>(i) / count);
+    }
+};
+
+/// Rows of numbers, real and imaginary parts apart.
 struct Rows {
     int width = 0;
-    std::vector<double> re, im;
-    Rows(int rows, int positions)
-        : width((positions + lane - 1) / lane * lane), re(static_cast<std::size_t>(rows) * width), im(re.size()) {}
+    std::vector<float> re, im;
+    Rows(int rows, int w) : width(in_lanes(w)), re(static_cast<std::size_t>(rows) * width), im(re.size()) {}
     std::size_t at(int row) const { return static_cast<std::size_t>(row) * width; }
-    /// Largest magnitude of each row, from every third position.
+    /// Largest magnitude of each row, from every third number.
     std::vector<double> strongest() const {
         std::vector<double> out;
         for (std::size_t from = 0; from < re.size(); from += width) {
-            double most = 0.0;
+            float most = 0.0F;
             for (int i = 0; i < width; i += 3)
                 most = std::max(most, re[from + i] * re[from + i] + im[from + i] * im[from + i]);
-            out.push_back(std::sqrt(most));
+            out.push_back(std::sqrt(static_cast<double>(most)));
         }
         return out;
     }
 };
 
-/// Incident coefficients of one target for sources at grid points + offset: rows -order .. order from `row` on.
-/// With alpha and beta the spectra of order n at +kx and, but for (-1)^n, at -kx:
-///   a_n, a_-n = (-j)^n (C +- S),  C = sum (alpha + (-1)^n beta) cos kx x,  S = j sum (alpha - (-1)^n beta) sin kx x.
-void illuminate(const Grid& grid, double offset, int positions, const Scatterer& target, const Host& host,
-                const Spectra& spectra, int count, int row, Rows& out) {
-    using Matrix = Eigen::MatrixXd;
-    const int M = target.order();
-    Matrix cosine(positions, count), sine(positions, count), even(count, 2 * M + 2), odd(count, 2 * M + 2);
-    const double x = grid.start + offset - target.x;
-    Eigen::ArrayXd turn_re(positions), turn_im(positions);
-    for (int i = 0; i < positions; ++i) {
-        const double angle = spectra.spacing * (x + i * grid.spacing);
-        turn_re[i] = std::cos(angle);
-        turn_im[i] = std::sin(angle);
+/// cos and sin of kx d at d = i * spacing, a row per kx.
+Rows waves(double spacing, int distances, double dk, int count) {
+    Rows out(count, distances);
+    const std::size_t n = static_cast<std::size_t>(out.width);
+    std::vector<double> turn_re(n), turn_im(n), re(n, 1.0), im(n, 0.0);
+    for (std::size_t i = 0; i < n; ++i) {
+        turn_re[i] = std::cos(dk * spacing * static_cast<double>(i));
+        turn_im[i] = std::sin(dk * spacing * static_cast<double>(i));
     }
-    cosine.col(0).setOnes();
-    sine.col(0).setZero();
-    for (int k = 1; k < count; ++k) {
-        cosine.col(k).array() = cosine.col(k - 1).array() * turn_re - sine.col(k - 1).array() * turn_im;
-        sine.col(k).array() = sine.col(k - 1).array() * turn_re + cosine.col(k - 1).array() * turn_im;
-    }
-    const Cx inverse_k = Cx{1.0} / spectra.k;
     for (int k = 0; k < count; ++k) {
-        const std::size_t at = static_cast<std::size_t>(k);
-        const double kx = k * spectra.spacing;
-        const Cx kz = spectra.kz[at], sent = (spectra.spacing * (k == 0 ? 0.5 : 1.0)) * spectra.down[at];
-        const Cx down = sent * target.to_top[at];
-        const Cx up = host.endless() ? Cx{} : sent * spectra.below[at] * spectra.pass[at] * target.to_bottom[at];
-        const Cx E = (Cx{kx} + turn(kz)) * inverse_k, E_inverse = (Cx{kx} - turn(kz)) * inverse_k;
-        Cx P{1.0}, Q{1.0};
-        double sign = 1.0;
-        for (int n = 0; n <= M; ++n, P = P * E, Q = Q * E_inverse, sign = -sign) {
-            const Cx alpha = down * Q + up * P, beta = sign * (down * P + up * Q), sum = alpha + beta,
-                     difference = turn(alpha - beta);
-            even(k, 2 * n) = sum.re;
-            even(k, 2 * n + 1) = sum.im;
-            odd(k, 2 * n) = difference.re;
-            odd(k, 2 * n + 1) = difference.im;
+        float* const to_re = out.re.data() + out.at(k);
+        float* const to_im = out.im.data() + out.at(k);
+        for (std::size_t i = 0; i < n; ++i) {
+            to_re[i] = static_cast<float>(re[i]);
+            to_im[i] = static_cast<float>(im[i]);
+            const double next = re[i] * turn_re[i] - im[i] * turn_im[i];
+            im[i] = im[i] * turn_re[i] + re[i] * turn_im[i];
+            re[i] = next;
         }
     }
-    const Matrix C = cosine * even, S = sine * odd;
-    Cx turned{1.0};
-    for (int n = 0; n <= M; ++n, turned = -turn(turned)) {
-        const Cx scale = Cx{target.root[static_cast<std::size_t>(n)]} * turned;
-        for (const int side : {1, -1}) {
-            const std::size_t to = out.at(row + M + side * n);
-            for (int i = 0; i < positions; ++i) {
-                const Cx value = scale * Cx{C(i, 2 * n) + side * S(i, 2 * n), C(i, 2 * n + 1) + side * S(i, 2 * n + 1)};
-                out.re[to + i] = value.re;
-                out.im[to + i] = value.im;
+    return out;
+}
+
+/// out[column][i] = sum_k wave[k][i] * spectrum[k][column]; columns in fours.
+void sum_waves(const float* wave, const float* spectrum, int count, int width, int columns, float* out) {
+    for (int column = 0; column < columns; column += 4) {
+        for (int from = 0; from < width; from += lane) {
+            Four sum[4][2] = {};
+            for (int k = 0; k < count; ++k) {
+                const float* const w = wave + static_cast<std::size_t>(k) * width + from;
+                const float* const s = spectrum + static_cast<std::size_t>(k) * columns + column;
+                const Four w0 = load(w), w1 = load(w + 4);
+                for (int c = 0; c < 4; ++c) {
+                    sum[c][0] += w0 * s[c];
+                    sum[c][1] += w1 * s[c];
+                }
+            }
+            for (int c = 0; c < 4; ++c) {
+                float* const to = out + static_cast<std::size_t>(column + c) * width + from;
+                store(to, sum[c][0]);
+                store(to + 4, sum[c][1]);
             }
         }
     }
 }
 
+/// Incident coefficients at one depth for sources at a distance d = i * spacing to the right. With alpha and beta the
+/// spectra of order n at +kx and, but for (-1)^n, at -kx:
+///   a_n, a_-n = (-j)^n (C +- S),  C = sum (alpha + (-1)^n beta) cos kx d,  S = j sum (alpha - (-1)^n beta) sin kx d.
+struct Table {
+    double above;
+    int order, width;
+    std::vector<float> even, odd;  ///< re C_n, im C_n and so on, a column of `width` each
+
+    Table(const Scatterer& target, int top_order, const Host& host, const Spectra& spectra, int count, double loudness,
+          const Rows& wave)
+        : above(target.above), order(top_order), width(wave.width) {
+        const int columns = (2 * order + 2 + 3) / 4 * 4;
+        std::vector<float> sums(static_cast<std::size_t>(count) * columns), differences(sums.size());
+        const Cx inverse_k = Cx{1.0} / spectra.k;
+        for (int k = 0; k < count; ++k) {
+            const std::size_t at = static_cast<std::size_t>(k);
+            const double kx = k * spectra.spacing;
+            const Cx kz = spectra.kz[at], sent = (spectra.spacing / loudness * (k == 0 ? 0.5 : 1.0)) * spectra.down[at];
+            const Cx down = sent * target.to_top[at];
+            const Cx up = host.endless() ? Cx{} : sent * spectra.below[at] * spectra.pass[at] * target.to_bottom[at];
+            const Cx E = (Cx{kx} + turn(kz)) * inverse_k, E_inverse = (Cx{kx} - turn(kz)) * inverse_k;
+            Cx P{1.0}, Q{1.0};
+            double sign = 1.0;
+            for (int n = 0; n <= order; ++n, P = P * E, Q = Q * E_inverse, sign = -sign) {
+                const Cx alpha = down * Q + up * P, beta = sign * (down * P + up * Q), sum = alpha + beta,
+                         difference = turn(alpha - beta);
+                const std::size_t to = at * columns + 2 * static_cast<std::size_t>(n);
+                sums[to] = static_cast<float>(sum.re);
+                sums[to + 1] = static_cast<float>(sum.im);
+                differences[to] = static_cast<float>(difference.re);
+                differences[to + 1] = static_cast<float>(difference.im);
+            }
+        }
+        even.resize(static_cast<std::size_t>(columns) * width);
+        odd.resize(even.size());
+        sum_waves(wave.re.data(), sums.data(), count, width, columns, even.data());
+        sum_waves(wave.im.data(), differences.data(), count, width, columns, odd.data());
+    }
+
+    /// a_n (side 1) or a_-n (side -1) at distances (first + i) * spacing of either side, scaled.
+    void lay_out(int n, int side, Cx scale, int first, int count, float* re, float* im) const {
+        const float* const C = even.data() + 2 * static_cast<std::size_t>(n) * width;
+        const float* const S = odd.data() + 2 * static_cast<std::size_t>(n) * width;
+        const float s_re = static_cast<float>(scale.re), s_im = static_cast<float>(scale.im);
+        for (int i = 0; i < count; ++i) {
+            const int at = std::min(std::abs(first + i), width - 1);  // past the end: lanes that nobody reads
+            const float turned = static_cast<float>(first + i < 0 ? -side : side);
+            const float a_re = C[at] + turned * S[at], a_im = C[width + at] + turned * S[width + at];
+            re[i] = s_re * a_re - s_im * a_im;
+            im[i] = s_re * a_im + s_im * a_re;
+        }
+    }
+};
+
+/// out[i] = sum_t weight[t] in[i + t].
+void interpolate(const std::array<float, taps>& weight, const float* in, float* out, int width) {
+    for (int from = 0; from < width; from += lane) {
+        Four sum0{}, sum1{};
+        for (int t = 0; t < taps; ++t) {
+            sum0 += weight[t] * load(in + from + t);
+            sum1 += weight[t] * load(in + from + t + 4);
+        }
+        store(out + from, sum0);
+        store(out + from + 4, sum1);
+    }
+}
+
+/// Scaled incident coefficients of one target, orders -order .. order from `row` on, at distances first + i * spacing:
+/// first those of even i, then those of odd i. With `turn_round` -1, what reciprocity asks of the receiver:
+/// (-1)^n a_-n(d), where a_-n(d) = a_n(-d).
+void illuminate(const Table& table, const Scatterer& target, double first, double spacing, int turn_round, int row,
+                Rows& out) {
+    const int half = out.width / 2;
+    const double place[2] = {first / (2.0 * spacing), first / (2.0 * spacing) + 0.5};
+    const int left = static_cast<int>(std::floor(place[0]));
+    std::array<float, taps> weight[2];
+    int skip[2];
+    for (int p = 0; p < 2; ++p) {
+        const double floor = std::floor(place[p]);
+        skip[p] = static_cast<int>(floor) - left;
+        const std::array<double, taps> w = weights(place[p] - floor);
+        for (int t = 0; t < taps; ++t) weight[p][t] = static_cast<float>(w[t]);
+    }
+    const int count = half + taps + 1;
+    std::vector<float> re(static_cast<std::size_t>(count)), im(re.size());
+    Cx turned{1.0};
+    for (int n = 0; n <= target.order(); ++n, turned = -turn_round * turn(turned)) {
+        const Cx scale = Cx{target.root[static_cast<std::size_t>(n)]} * turned;
+        for (const int side : {1, -1}) {
+            if (n == 0 && side < 0) continue;
+            table.lay_out(n, side * turn_round, scale, left + 1 - taps / 2, count, re.data(), im.data());
+            const std::size_t to = out.at(row + target.order() + side * n);
+            for (int p = 0; p < 2; ++p) {
+                interpolate(weight[p], re.data() + skip[p], out.re.data() + to + p * half, half);
+                interpolate(weight[p], im.data() + skip[p], out.im.data() + to + p * half, half);
+            }
+        }
+    }
+}
+
+/// sum_i g_i sum_j T_ij a_j, over the parts of T that count, by what stands on either side of them at its strongest.
+std::vector<Complex> join(const Rows& a, const Rows& g, const std::vector<Complex>& joint, double share) {
+    const std::vector<double> a_most = a.strongest(), g_most = g.strongest();
+    const std::size_t rows = a_most.size();
+    std::vector<double> size(joint.size());
+    double most = 0.0;
+    for (std::size_t i = 0; i < joint.size(); ++i)
+        most = std::max(most, size[i] = std::sqrt(std::norm(joint[i])) * g_most[i / rows] * a_most[i % rows]);
+    struct Part {
+        std::size_t from;
+        float re, im;
+    };
+    std::vector<std::vector<Part>> parts(rows);
+    for (std::size_t i = 0; i < joint.size(); ++i) {
+        if (size[i] > 0.03 * share * most)
+            parts[i / rows].push_back({a.at(static_cast<int>(i % rows)), static_cast<float>(joint[i].real()),
+                                       static_cast<float>(joint[i].imag())});
+    }
+    std::vector<Complex> out(static_cast<std::size_t>(a.width));
+    for (int from = 0; from < a.width; from += lane) {
+        Four sum_re[2] = {}, sum_im[2] = {};
+        for (std::size_t i = 0; i < rows; ++i) {
+            if (parts[i].empty()) continue;
+            Four re[2] = {}, im[2] = {};
+            for (const Part& part : parts[i]) {
+                const float* const at_re = a.re.data() + part.from + from;
+                const float* const at_im = a.im.data() + part.from + from;
+                for (int p = 0; p < 2; ++p) {
+                    const Four a_re = load(at_re + 4 * p), a_im = load(at_im + 4 * p);
+                    re[p] += part.re * a_re - part.im * a_im;
+                    im[p] += part.re * a_im + part.im * a_re;
+                }
+            }
+            for (int p = 0; p < 2; ++p) {
+                const std::size_t at = g.at(static_cast<int>(i)) + static_cast<std::size_t>(from + 4 * p);
+                const Four g_re = load(g.re.data() + at), g_im = load(g.im.data() + at);
+                sum_re[p] += g_re * re[p] - g_im * im[p];
+                sum_im[p] += g_re * im[p] + g_im * re[p];
+            }
+        }
+        for (int p = 0; p < lane; ++p)
+            out[static_cast<std::size_t>(from + p)] = {static_cast<double>(sum_re[p / 4][p % 4]),
+                                                       static_cast<double>(sum_im[p / 4][p % 4])};
+    }
+    return out;
+}
+
 }  // namespace
 
 Grid grid_for(const Line& line, double widest) {
-    const double coarsest = pi / (2.0 * widest * oversampling);
     Grid grid;
-    grid.spacing = coarsest;
-    if (!(line.separation > 0.0)) {
-        grid.shift = 0;
-    } else {
-        const double steps = std::ceil(line.separation / coarsest);
-        if (line.separation / steps > 0.6 * coarsest) {
-            grid.spacing = line.separation / steps;
-            grid.shift = static_cast<int>(steps);
-        }
-    }
-    const double span = line.step * (line.traces - 1);
+    grid.spacing = pi / (2.0 * widest * oversampling);
     grid.start = line.first - (taps / 2) * grid.spacing;
-    grid.size = static_cast<int>(std::ceil(span / grid.spacing)) + taps + 1;
+    const double span = line.step * (line.traces - 1);
+    grid.half = in_lanes((static_cast<int>(std::ceil(span / grid.spacing)) + taps + 2) / 2);
     return grid;
 }
 
@@ -111,85 +266,61 @@ std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vect
                              const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
                              double share) {
     int rows = 0;
-    for (const Scatterer& target : targets) rows += target.size();
-    const bool own = grid.shift < 0;
-    const int positions = grid.size + (own ? 0 : grid.shift);
-    Rows a(rows, positions + lane), own_g(own ? rows : 0, own ? grid.size + lane : 0);
+    double farthest = 0.0, nearest = targets[0].above;
+    for (const Scatterer& target : targets) {
+        rows += target.size();
+        const double left = grid.start - target.x, right = left + 2 * grid.half * grid.spacing;
+        farthest = std::max({farthest, -left, right});
+        nearest = std::min(nearest, target.above);
+    }
+    farthest += 0.5 * line.separation;
+    // What is left of the wave on its way down is taken out, that floats keep their range in lossy ground.
+    double loudness = std::sqrt(norm(spectra.down[0] * travel(spectra.kz[0], nearest)));
+    if (!(loudness > 0.0)) loudness = 1.0;
+    const int distances = static_cast<int>(farthest / (2.0 * grid.spacing)) + taps / 2 + 2;
+    const Rows wave = waves(2.0 * grid.spacing, distances, spectra.spacing, count);
+    std::vector<Table> tables;
+    Rows a(rows, 2 * grid.half), g(rows, 2 * grid.half);
     int row = 0;
     for (const Scatterer& target : targets) {
-        illuminate(grid, -0.5 * line.separation, positions, target, host, spectra, count, row, a);
-        if (own) illuminate(grid, 0.5 * line.separation, grid.size, target, host, spectra, count, row, own_g);
+        const auto level = [&](const auto& other) { return other.above == target.above; };
+        auto table = std::find_if(tables.begin(), tables.end(), level);
+        if (table == tables.end()) {
+            int order = 0;
+            for (const Scatterer& other : targets)
+                if (level(other)) order = std::max(order, other.order());
+            tables.emplace_back(target, order, host, spectra, count, loudness, wave);
+            table = tables.end() - 1;
+        }
+        const double from = grid.start - target.x;
+        illuminate(*table, target, from - 0.5 * line.separation, grid.spacing, 1, row, a);
+        illuminate(*table, target, from + 0.5 * line.separation, grid.spacing, -1, row, g);
         row += target.size();
     }
-    const Rows& g = own ? own_g : a;
-    const std::size_t shift = own ? 0 : static_cast<std::size_t>(grid.shift);
-    std::vector<int> partner(static_cast<std::size_t>(rows));  // row of g that meets row i of T a, order turned round
-    std::vector<double> sign(static_cast<std::size_t>(rows));
-    row = 0;
-    for (const Scatterer& target : targets) {
-        for (int i = 0; i < target.size(); ++i) {
-            partner[row + i] = row + target.size() - 1 - i;
-            sign[row + i] = ((i - target.order()) & 1) ? -1.0 : 1.0;
-        }
-        row += target.size();
-    }
-    // The parts of T that count, by what stands on either side of them at its strongest.
-    const std::vector<double> a_most = a.strongest(), g_most = g.strongest();
-    double most = 0.0;
-    for (int i = 0; i < rows * rows; ++i)
-        most = std::max(most, std::abs(joint[i]) * g_most[partner[i / rows]] * a_most[i % rows]);
-    struct Part {
-        int column;
-        double re, im;
-    };
-    std::vector<std::vector<Part>> parts(static_cast<std::size_t>(rows));
-    for (int i = 0; i < rows * rows; ++i) {
-        if (!(std::abs(joint[i]) * g_most[partner[i / rows]] * a_most[i % rows] > 0.03 * share * most)) continue;
-        parts[i / rows].push_back({i % rows, joint[i].real(), joint[i].imag()});
-    }
-    std::vector<Complex> out(static_cast<std::size_t>(grid.size));
-    for (int from = 0; from < grid.size; from += lane) {
-        double sum_re[lane] = {}, sum_im[lane] = {};
-        for (int i = 0; i < rows; ++i) {
-            double re[lane] = {}, im[lane] = {};
-            if (parts[i].empty()) continue;
-            for (const Part& part : parts[i]) {
-                const double t_re = part.re, t_im = part.im;
-                const double* a_re = a.re.data() + a.at(part.column) + from;
-                const double* a_im = a.im.data() + a.at(part.column) + from;
-                for (int p = 0; p < lane; ++p) {
-                    re[p] += t_re * a_re[p] - t_im * a_im[p];
-                    im[p] += t_re * a_im[p] + t_im * a_re[p];
-                }
-            }
-            const double* g_re = g.re.data() + g.at(partner[i]) + from + shift;
-            const double* g_im = g.im.data() + g.at(partner[i]) + from + shift;
-            for (int p = 0; p < lane; ++p) {
-                sum_re[p] += sign[i] * (g_re[p] * re[p] - g_im[p] * im[p]);
-                sum_im[p] += sign[i] * (g_re[p] * im[p] + g_im[p] * re[p]);
-            }
-        }
-        for (int p = 0; p < lane && from + p < grid.size; ++p) out[from + p] = {sum_re[p], sum_im[p]};
-    }
+    std::vector<Complex> out = join(a, g, joint, share);
+    for (Complex& value : out) value *= loudness * loudness;
     return out;
 }
 
 void onto_traces(const Grid& grid, const Line& line, const std::vector<Complex>& values, Complex factor, Complex* out,
                  std::size_t stride) {
-    constexpr double half = taps / 2, shape = pi * half * (1.0 - 1.0 / oversampling);
+    static const Weights table;
     for (int trace = 0; trace < line.traces; ++trace) {
         const double at = (line.first + trace * line.step - grid.start) / grid.spacing;
         const int left = static_cast<int>(at);
-        const double part = at - left;
-        const double wave = std::sin(pi * part) / pi;
-        Complex sum = 0.0;
-        for (int tap = 1 - taps / 2; tap <= taps / 2; ++tap) {
-            const double d = part - tap, inside = 1.0 - d * d / (half * half);
-            if (!(inside > 0.0)) continue;
-            const double sinc = std::fabs(d) < 1e-9 ? 1.0 : ((tap & 1) ? -wave : wave) / d;
-            sum += sinc * std::exp(shape * (std::sqrt(inside) - 1.0)) * values[left + tap];
+        const double entry = (at - left) * Weights::count;
+        const int low = std::min(static_cast<int>(entry), Weights::count - 1);
+        const double part = entry - low;
+        const std::array<double, taps>&one = table.at[low], &other = table.at[low + 1];
+        double re = 0.0, im = 0.0;
+        for (int t = 0; t < taps; ++t) {
+            const int i = left + 1 - taps / 2 + t;
+            const Complex& value = values[static_cast<std::size_t>((i >> 1) + (i & 1) * grid.half)];
+            const double weight = one[t] + part * (other[t] - one[t]);
+            re += weight * value.real();
+            im += weight * value.imag();
         }
-        out[static_cast<std::size_t>(trace) * stride] += factor * sum;
+        out[static_cast<std::size_t>(trace) * stride] += factor * Complex{re, im};
     }
 }
 

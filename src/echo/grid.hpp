@@ -10,8 +10,7 @@ namespace gg {
 /// The grid of one frequency: as coarse as that frequency's echo allows.
 struct Grid {
     double start = 0.0, spacing = 0.0;  ///< m; antenna midpoints at start + i * spacing
-    int size = 0;                       ///< points
-    int shift = -1;  ///< transmitter to receiver in points; -1: not a whole number, the receiver is reckoned by itself
+    int half = 0;                       ///< points in each half: those of even and those of odd i
 };
 
 /// What the line needs of the grid.
@@ -27,12 +26,14 @@ Grid grid_for(const Line& line, double widest);
 
 /// Echo of all targets on the grid, up to the constant of reciprocity: sum (-1)^n g_{q,-n} (T a)_{qn},
 /// with a and g the incident coefficients of a source at the transmitter and one at the receiver.
+/// The coefficients have half the echo's bandwidth and depend on the distance from the target alone: they are summed
+/// over kx once per depth, at distances 2 * spacing apart on one side, and interpolated to where they are needed.
 std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vector<Scatterer>& targets,
                              const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
                              double share);
 
 /// Adds `factor` times the values on the grid, interpolated, to one number per trace, `stride` apart.
-/// Windowed sinc of 16 points over a 1.4-fold oversampled echo: 2e-4 of what stands at the band's edge, less inside.
+/// Windowed sinc of 16 points over a 1.35-fold oversampled echo: 2e-4 of what stands at the band's edge, less inside.
 void onto_traces(const Grid& grid, const Line& line, const std::vector<Complex>& values, Complex factor, Complex* out,
                  std::size_t stride);
 
