@@ -40,6 +40,8 @@ inline Cx root_below(Cx a) {
     const double im = -std::sqrt(0.5 * (size - a.re));
     return {0.5 * a.im / im, im};
 }
+/// Principal square root: Re >= 0.
+inline Cx root(Cx a) { return a.im > 0.0 ? conj(root_below(conj(a))) : root_below(a); }
 /// exp(-j a d): a wave's way over a distance d.
 inline Cx travel(Cx a, double d) {
     const double size = std::exp(a.im * d), angle = -a.re * d;

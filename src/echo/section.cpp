@@ -130,7 +130,10 @@ class Engine {
           host_(host_of(scene)),
           delta_(damping / period_.length()) {
         const Sampling& s = scene.sampling;
-        line_ = {s.first, s.step, s.traces, scene.separation, way_round(scene, care, period_.length())};
+        // The boundaries' own echoes need the way of light in a period: along the surface images are not weak.
+        line_ = {s.first, s.step, s.traces, scene.separation,
+                 std::max(way_round(scene, care, period_.length()),
+                          speed_of_light * period_.length() + 2.0 * scene.separation)};
         for (int i = 0; i < s.samples; ++i)
             gain_.push_back(std::exp(delta_ * (i + period_.lead) * period_.dt) / period_.length());
         bins_ = static_cast<std::size_t>(period_.size) / 2 + 1;
@@ -195,16 +198,26 @@ class Engine {
         const double widest = std::hypot(k_host, reach_in);
         const Grid grid = grid_for(line_, widest);
         const double dk = 2.0 * pi / line_.period;
+        const bool layered = scene_.ground.slabs.size() > 1;
+        // The boundaries' own echoes: evanescent waves, down to the first of them and back.
+        const double reach_echo = 0.5 * fall / (scene_.ground.slabs[0].thickness + scene_.height);
+        const int count_echo =
+            layered ? static_cast<int>(std::hypot(media.ground[1].k.real(), reach_echo) / dk) + 2 : 0;
         const int count_in = static_cast<int>(widest / dk) + 2;
         const int count_between = static_cast<int>(std::hypot(k_host, reach_between) / dk) + 2;
-        const int count = targets.empty() ? 0 : std::max(count_in, count_between);
-        Spectra spectra;
-        if (count > 0) spectra = spectra_of(media, scene_.ground, host_, scene_.height, scene_.polarisation, dk, count);
-
-        for (Scatterer& target : targets) {
-            for (const Cx kz : spectra.kz) {
-                target.to_top.push_back(travel(kz, target.above));
-                if (!host_.endless()) target.to_bottom.push_back(travel(kz, target.below));
+        const int count_targets = targets.empty() ? 0 : std::max(count_in, count_between);
+        const Spectra spectra = spectra_of(media, scene_.ground, host_, scene_.height, scene_.polarisation, dk,
+                                           std::max(count_targets, count_echo));
+        for (std::size_t q = 0; q < targets.size(); ++q) {
+            Scatterer& target = targets[q];
+            if (q > 0 && target.above == targets[q - 1].above) {
+                target.to_top = targets[q - 1].to_top;
+                target.to_bottom = targets[q - 1].to_bottom;
+                continue;
+            }
+            for (std::size_t i = 0; i < static_cast<std::size_t>(count_targets); ++i) {
+                target.to_top.push_back(travel(spectra.kz[i], target.above));
+                if (!host_.endless()) target.to_bottom.push_back(travel(spectra.kz[i], target.below));
             }
         }
         const Complex source =
@@ -228,28 +241,24 @@ class Engine {
             onto_traces(grid, line_, echo, constant, traces.data(), 1);
             for (std::size_t i = 0; i < traces.size(); ++i) put(i, traces[i]);
         }
-        if (scene_.ground.slabs.size() > 1) put(layers_row(), layers_echo(media, fall));
+        if (layered) put(layers_row(), layers_echo(media, spectra, count_echo));
         const double nearest = speed_of_light / (20.0 * scene_.pulse.centre_frequency);
         put(direct_row(), direct_wave(media, std::max(scene_.separation, nearest), scene_.height, scene_.polarisation));
     }
 
-    /// Echo of the boundaries below the surface at the receiver, per unit source. Its sum over kx closes after the way
-    /// of light in a period: along the surface images are not weak.
-    Complex layers_echo(const Media& media, double fall) const {
+    /// Echo of the boundaries below the surface at the receiver, per unit source.
+    Complex layers_echo(const Media& media, const Spectra& s, int count) const {
         const bool along = scene_.polarisation == Polarisation::along;
-        const double dk = 2.0 * pi / (speed_of_light * period_.length() + 2.0 * scene_.separation);
-        const double deepest = 0.5 * fall / (scene_.ground.slabs[0].thickness + scene_.height);
-        const int count = static_cast<int>(std::hypot(media.ground[1].k.real(), deepest) / dk) + 2;
-        const Spectra s = spectra_of(media, scene_.ground, host_, scene_.height, scene_.polarisation, dk, count);
-        const Complex w = media.w;
-        Cx sum;
-        for (std::size_t i = 0; i < s.size(); ++i) {
-            const double kx = static_cast<double>(i) * s.spacing;
-            Cx value = (2.0 * std::cos(kx * scene_.separation) * (i == 0 ? 0.5 : 1.0)) * s.echo[i];
+        const double angle = s.spacing * scene_.separation;
+        const Cx phase_step{std::cos(angle), std::sin(angle)};
+        Cx sum, phase{1.0};
+        for (int k = 0; k < count; ++k, phase = phase * phase_step) {
+            const std::size_t i = static_cast<std::size_t>(k);
+            Cx value = (2.0 * phase.re * (k == 0 ? 0.5 : 1.0)) * s.echo[i];
             if (scene_.height > 0.0) value = value * travel(s.kz_air[i], 2.0 * scene_.height);
             sum += along ? value / s.kz_air[i] : value * s.kz_air[i];
         }
-        const Complex constant = along ? -w * vacuum_permeability : 1.0 / (w * vacuum_permittivity);
+        const Complex constant = along ? -media.w * vacuum_permeability : 1.0 / (media.w * vacuum_permittivity);
         return s.spacing / (4.0 * pi) * constant * Complex(sum);
     }
 
