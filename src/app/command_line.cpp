@@ -103,7 +103,7 @@ double footer(Canvas& canvas, Box box, std::string_view words, const TextStyle& 
 }
 
 std::string picture(const Order& order, const Plan& plan) {
-    const Answers answers = answers_for(plan);
+    Answers answers = answers_for(plan);
     const ViewRow* view = nullptr;
     for (const ViewRow& row : views())
         if (row.id == order.view) view = &row;
@@ -129,6 +129,7 @@ std::string picture(const Order& order, const Plan& plan) {
         section = pair_section(plan, Detail::full, order.section.polarisation);
         add_focused(section);
         add_separation(section, plan);
+        if (section.separation) settle(answers, plan, *section.separation);
         style.section = &section;
     }
     svg.describe(view->draw(canvas, plan, answers, style).description);
@@ -136,7 +137,7 @@ std::string picture(const Order& order, const Plan& plan) {
 }
 
 int check(const Order& order, const Plan& plan, const Streams& streams) {
-    const Answers answers = answers_for(plan);
+    const Answers answers = settled_answers_for(plan);
     std::string text = plan.name + "\n";
     int good = 0, thin = 0, poor = 0;
     for (const std::string& fault : answers.faults) text += "fault  " + spell(fault, order.units) + "\n";
@@ -198,7 +199,7 @@ int run_command_line(const std::vector<std::string>& words, std::istream& in, st
     }
     const std::optional<Plan> plan = plan_of(order, streams);
     if (!plan) return exit_failed;
-    if (order.command == Command::answers) return give(order, streams, write_answers(*plan, answers_for(*plan)));
+    if (order.command == Command::answers) return give(order, streams, write_answers(*plan, settled_answers_for(*plan)));
     if (order.command == Command::picture) return give(order, streams, picture(order, *plan));
     if (order.command == Command::section) return section(order, *plan, streams);
     return check(order, *plan, streams);

@@ -18,6 +18,11 @@ std::string gain_words(Gain gain) {
     return {};
 }
 
+/// What travel times alone tell, m: the answer itself, or the rule beside it once the section was measured (settle()).
+static double by_travel_times(const Answer& sideways, bool settled) {
+    return settled && !sideways.rules.empty() ? sideways.rules.back().value : sideways.likely.value;
+}
+
 bool PairWords::measured() const { return seen && seen->separation && seen->separation->raw.lower_peak > 0; }
 
 PairPicture::Verdict PairWords::verdict() const {
@@ -52,7 +57,8 @@ std::string PairWords::least() const {
         if (focused.ok()) out += said(focused.value) + " focused";
         return out += '.';
     }
-    const double travel = answer_or(answers, "apart.sideways", 0.0);
+    const Answer* sideways = answers.find("apart.sideways");
+    const double travel = sideways ? by_travel_times(*sideways, answers.find("apart.focused") != nullptr) : 0.0;
     if (!(travel > 0)) return {};
     if (seen) out = "By travel times from ";
     return out += said(travel) + ".";
@@ -66,10 +72,12 @@ std::string PairWords::least_in_brief() const {
 
 std::string PairWords::rules() const {
     const Answer* sideways = answers.find("apart.sideways");
-    if (!sideways || !sideways->likely.ok()) return {};
+    if (!sideways) return {};
+    const bool settled = answers.find("apart.focused") != nullptr;
     std::string out = "By travel times ";
-    out += say(sideways->likely.value, Quantity::length, units);
-    for (const Rule& rule : sideways->rules) {
+    out += say(by_travel_times(*sideways, settled), Quantity::length, units);
+    for (std::size_t i = 0; i + (settled ? 1 : 0) < sideways->rules.size(); ++i) {
+        const Rule& rule = sideways->rules[i];
         out += "; ";
         out += rule.name + " " + say(rule.value, Quantity::length, units);
     }

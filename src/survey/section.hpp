@@ -7,7 +7,7 @@
 
 #include "echo/apart.hpp"
 #include "echo/focus.hpp"
-#include "survey/plan.hpp"
+#include "survey/answers.hpp"
 
 namespace gg {
 
@@ -77,6 +77,14 @@ struct Separation {
 Separation separation_for(const Plan& plan, Polarisation polarisation = Polarisation::along);
 /// One half of it: the dip and the least gap of one reading.
 void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out);
+
+/// Puts what was measured in the place of what travel times tell: the answer "apart.sideways" becomes the least gap in
+/// the raw section (the travel-time value stands beside it as a rule), "apart.focused" is added, and the verdict of the
+/// pair picture follows. The ends of the range keep the ratio to the likely value that the travel times give.
+/// Does nothing where nothing was measured, or when done already.
+void settle(Answers& answers, const Plan& plan, const Separation& separation);
+/// answers_for(plan), settled wherever the plan has a section: the full reckoning, for files. About ten sections' time.
+Answers settled_answers_for(const Plan& plan);
 
 /// How much a section asks for, 1 and up; time goes with it, roughly. (Periods of the centre frequency in the
 /// record)^2, because frequencies and antenna positions both go with its length, times the work on the targets' orders.

@@ -95,6 +95,34 @@ double lateral_rule(double speed, double range, double width) {
     return std::sqrt(0.5 * speed * range * width);
 }
 
+void grade_sideways(Answer& a, const Plan& plan, std::optional<Value> focused) {
+    const double asked = plan.need.closest;
+    const double goal = asked > 0.0 ? asked : plan.target.count > 1 ? plan.target.gap : 0.0;
+    std::string least = token(a.likely.value, Quantity::length) + " centre to centre";
+    if (!a.likely.ok()) least = "no distance at all";
+    if (focused && focused->ok()) least += " (focused: " + token(focused->value, Quantity::length) + ")";
+    a.grade = Grade::none;
+    a.mends.clear();
+    if (!(goal > 0.0)) {
+        a.why = "Two such targets side by side would show as two from " + least + ".";
+        return;
+    }
+    const bool after_focusing = focused && focused->ok() && focused->value <= goal;
+    a.grade = a.likely.ok() && a.high <= goal                               ? Grade::good
+              : (a.likely.ok() && a.likely.value <= goal) || after_focusing ? Grade::thin
+                                                                            : Grade::poor;
+    a.why = "Two of them show as two from " + least + "; " + (asked > 0.0 ? "asked for are " : "these lie ") +
+            token(goal, Quantity::length) +
+            (asked > 0.0              ? "."
+             : a.grade == Grade::poor ? " apart, so they run together."
+                                      : " apart.");
+    if (a.grade != Grade::good && a.likely.ok()) {
+        // The gap goes with the root of the pulse width at depth.
+        const double want = keyed_up(plan.antenna.pulse.centre_frequency * std::pow(a.high / goal, 2.0));
+        a.mends.push_back({"Centre frequency " + token(want, Quantity::frequency), "antenna.frequency", want});
+    }
+}
+
 void add_sideways(const Setting& setting, Answers& answers) {
     const Case& c = setting.likely();
     const double f = setting.frequency(), R = setting.radius(), gap = setting.plan.target.gap;
@@ -142,24 +170,7 @@ void add_sideways(const Setting& setting, Answers& answers) {
     a.rules = {{"half the wavelength", 0.5 * v / f, "common practice, no source"},
                {"sqrt(speed x depth x pulse width / 2)", lateral_rule(c.mean_speed(), c.depth, 1.0 / f),
                 "Annan & Cosway 1992, from memory"}};
-    const double asked = setting.plan.need.closest;
-    const double goal = asked > 0.0 ? asked : setting.plan.target.count > 1 ? gap : 0.0;
-    const std::string least = token(a.likely.value, Quantity::length);
-    if (!(goal > 0.0)) {
-        a.why = "Two such targets side by side would show as two from " + least + " centre to centre.";
-        return;
-    }
-    a.grade = a.high <= goal ? Grade::good : a.likely.value <= goal ? Grade::thin : Grade::poor;
-    a.why = "Two of them show as two from " + least + " centre to centre; " +
-            (asked > 0.0 ? "asked for are " : "these lie ") + token(goal, Quantity::length) +
-            (asked > 0.0              ? "."
-             : a.grade == Grade::poor ? " apart, so they run together."
-                                      : " apart.");
-    if (a.grade != Grade::good) {
-        // The gap goes with the root of the pulse width at depth.
-        const double want = keyed_up(f * std::pow(a.high / goal, 2.0));
-        a.mends.push_back({"Centre frequency " + token(want, Quantity::frequency), "antenna.frequency", want});
-    }
+    grade_sideways(a, setting.plan);
 }
 
 }  // namespace gg

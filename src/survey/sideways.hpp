@@ -1,8 +1,10 @@
 #pragma once
-/// Two equal targets side by side: when does the line show two? By travel times and the returned pulse's envelope, for
-/// now the one place that answers it; no multiple echoes between the targets.
+/// Two equal targets side by side: when does the line show two? By travel times and the returned pulse's envelope, at
+/// once; no multiple echoes between the targets. settle() in section.hpp puts the full-wave measurement in its place.
+#include <optional>
 #include <vector>
 
+#include "survey/answers.hpp"
 #include "survey/cases.hpp"
 
 namespace gg {
@@ -37,6 +39,10 @@ double pair_dip(const EchoPulse& echo, const EchoCurve& curve, double gap);
 /// Smallest distance centre to centre from which the dip stays at or above `apart_dip`, m; no less than the targets'
 /// own diameter, at which they touch.
 Value smallest_gap(const Case& c, double radius);
+
+/// Grade, reason and mends of the answer "apart.sideways" from its numbers and what the plan asks for.
+/// @param focused  smallest gap once focused, m, where it was measured
+void grade_sideways(Answer& answer, const Plan& plan, std::optional<Value> focused = {});
 
 /// sqrt(v r W / 2): v m/s, r m, W s; all > 0, else 0. (Annan & Cosway 1992, from memory)
 double lateral_rule(double speed, double range, double width);

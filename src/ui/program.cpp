@@ -314,6 +314,9 @@ void Program::State::work_on_section() {
     section.step(session.plan, session.view.field, !grip.field.empty(), session.now);
     session.section = section.section();
     session.no_section = section.reason();
+    // The answers speak of the usual way to turn the antenna.
+    if (session.section && session.section->separation && session.view.field == Polarisation::along)
+        settle(session.answers, session.plan, *session.section->separation);
 }
 
 void Program::State::draw(Screen& screen) {

@@ -264,3 +264,26 @@ TEST_CASE("the coarse section is the full one to a percent, where both have a tr
     CHECK(compared == coarse.traces);
     CHECK(worst < 0.01 * strongest);
 }
+
+TEST_CASE("what was measured takes the place of what travel times tell, which stays beside it") {
+    const Plan plan = bars(0.2);
+    const Answers quick = answers_for(plan), full = settled_answers_for(plan);
+    const Answer &before = *quick.find("apart.sideways"), &after = *full.find("apart.sideways");
+    REQUIRE(full.find("apart.focused"));
+    CHECK(full.list.size() == quick.list.size() + 1);
+    const Separation measured = separation_for(plan);
+    CHECK(after.likely == measured.least_raw);
+    CHECK(full.find("apart.focused")->likely == measured.least_focused);
+    CHECK(after.rules.back().value == before.likely.value);
+    CHECK(after.low <= after.likely.value);
+    CHECK(after.high >= after.likely.value);
+    CHECK(full.pair.verdict != PairPicture::Verdict::one);  // 0.2 m at 0.3 m depth part at least once focused
+
+    Answers twice = full;
+    settle(twice, plan, measured);
+    CHECK(twice.list.size() == full.list.size());
+
+    Plan flat = plan;
+    flat.target.shape = TargetShape::flat;
+    CHECK_FALSE(settled_answers_for(flat).find("apart.focused"));
+}
