@@ -148,58 +148,72 @@ struct Table {
         const float* const C = even.data() + 2 * static_cast<std::size_t>(n) * width;
         const float* const S = odd.data() + 2 * static_cast<std::size_t>(n) * width;
         const float s_re = static_cast<float>(scale.re), s_im = static_cast<float>(scale.im);
-        for (int i = 0; i < count; ++i) {
-            const int at = std::min(std::abs(first + i), width - 1);  // past the end: lanes that nobody reads
-            const float turned = static_cast<float>(first + i < 0 ? -side : side);
+        const auto put = [&](int i, int at, float turned) {
             const float a_re = C[at] + turned * S[at], a_im = C[width + at] + turned * S[width + at];
             re[i] = s_re * a_re - s_im * a_im;
             im[i] = s_re * a_im + s_im * a_re;
-        }
+        };
+        const float right = static_cast<float>(side);
+        const int zero = std::clamp(-first, 0, count), end = std::clamp(width - first, zero, count);
+        for (int i = 0; i < zero; ++i) put(i, std::min(-first - i, width - 1), -right);
+        for (int i = zero; i < end; ++i) put(i, first + i, right);
+        for (int i = end; i < count; ++i) re[i] = im[i] = 0.0F;  // lanes that nobody reads
     }
 };
 
-/// out[i] = sum_t weight[t] in[i + t].
-void interpolate(const std::array<float, taps>& weight, const float* in, float* out, int width) {
+/// out[i] = sign * sum_t weight[t] in[i + t].
+void interpolate(const std::array<float, taps>& weight, float sign, const float* in, float* out, int width) {
     for (int from = 0; from < width; from += lane) {
         Four sum0{}, sum1{};
         for (int t = 0; t < taps; ++t) {
             sum0 += weight[t] * load(in + from + t);
             sum1 += weight[t] * load(in + from + t + 4);
         }
-        store(out + from, sum0);
-        store(out + from + 4, sum1);
+        store(out + from, sign * sum0);
+        store(out + from + 4, sign * sum1);
     }
 }
 
-/// Scaled incident coefficients of one target, orders -order .. order from `row` on, at distances first + i * spacing:
-/// first those of even i, then those of odd i. With `turn_round` -1, what reciprocity asks of the receiver:
-/// (-1)^n a_-n(d), where a_-n(d) = a_n(-d).
-void illuminate(const Table& table, const Scatterer& target, double first, double spacing, int turn_round, int row,
-                Rows& out) {
-    const int half = out.width / 2;
-    const double place[2] = {first / (2.0 * spacing), first / (2.0 * spacing) + 0.5};
-    const int left = static_cast<int>(std::floor(place[0]));
+/// How a row of a table is read at distances first + i * spacing, half as far apart as its own.
+struct Reading {
+    int left;     ///< of the table, left of the first distance
+    int skip[2];  ///< from there on for even i, for odd i
     std::array<float, taps> weight[2];
-    int skip[2];
-    for (int p = 0; p < 2; ++p) {
-        const double floor = std::floor(place[p]);
-        skip[p] = static_cast<int>(floor) - left;
-        const std::array<double, taps> w = weights(place[p] - floor);
-        for (int t = 0; t < taps; ++t) weight[p][t] = static_cast<float>(w[t]);
+
+    Reading(double first, double spacing) : left(static_cast<int>(std::floor(first / (2.0 * spacing)))) {
+        for (int p = 0; p < 2; ++p) {
+            const double place = first / (2.0 * spacing) + 0.5 * p, floor = std::floor(place);
+            skip[p] = static_cast<int>(floor) - left;
+            const std::array<double, taps> w = weights(place - floor);
+            for (int t = 0; t < taps; ++t) weight[p][t] = static_cast<float>(w[t]);
+        }
     }
-    const int count = half + taps + 1;
+};
+
+/// Scaled incident coefficients of one target, orders -order .. order from `row` on, on the grid's even points, then
+/// its odd ones: `a` for the transmitter, in `g` for the receiver (-1)^n a_-n, as reciprocity asks.
+void illuminate(const Table& table, const Scatterer& target, const Grid& grid, double separation, int row, Rows& a,
+                Rows& g) {
+    const double first = grid.start - target.x;
+    const Reading at_a(first - 0.5 * separation, grid.spacing), at_g(first + 0.5 * separation, grid.spacing);
+    const int ahead = at_g.left - at_a.left, count = grid.half + taps + 1 + ahead;
     std::vector<float> re(static_cast<std::size_t>(count)), im(re.size());
+    const auto read = [&](const Reading& reading, int from, float sign, int to_row, Rows& out) {
+        for (int p = 0; p < 2; ++p) {
+            const std::size_t to = out.at(to_row) + static_cast<std::size_t>(p * grid.half);
+            interpolate(reading.weight[p], sign, re.data() + from + reading.skip[p], out.re.data() + to, grid.half);
+            interpolate(reading.weight[p], sign, im.data() + from + reading.skip[p], out.im.data() + to, grid.half);
+        }
+    };
     Cx turned{1.0};
-    for (int n = 0; n <= target.order(); ++n, turned = -turn_round * turn(turned)) {
+    float sign = 1.0F;
+    for (int n = 0; n <= target.order(); ++n, turned = -turn(turned), sign = -sign) {
         const Cx scale = Cx{target.root[static_cast<std::size_t>(n)]} * turned;
         for (const int side : {1, -1}) {
             if (n == 0 && side < 0) continue;
-            table.lay_out(n, side * turn_round, scale, left + 1 - taps / 2, count, re.data(), im.data());
-            const std::size_t to = out.at(row + target.order() + side * n);
-            for (int p = 0; p < 2; ++p) {
-                interpolate(weight[p], re.data() + skip[p], out.re.data() + to + p * half, half);
-                interpolate(weight[p], im.data() + skip[p], out.im.data() + to + p * half, half);
-            }
+            table.lay_out(n, side, scale, at_a.left + 1 - taps / 2, count, re.data(), im.data());
+            read(at_a, 0, 1.0F, row + target.order() + side * n, a);
+            read(at_g, ahead, sign, row + target.order() - side * n, g);
         }
     }
 }
@@ -218,7 +232,7 @@ std::vector<Complex> join(const Rows& a, const Rows& g, const std::vector<Comple
     };
     std::vector<std::vector<Part>> parts(rows);
     for (std::size_t i = 0; i < joint.size(); ++i) {
-        if (size[i] > 0.03 * share * most)
+        if (size[i] > 0.1 * share * most)
             parts[i / rows].push_back({a.at(static_cast<int>(i % rows)), static_cast<float>(joint[i].real()),
                                        static_cast<float>(joint[i].imag())});
     }
@@ -292,9 +306,7 @@ std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vect
             tables.emplace_back(target, order, host, spectra, count, loudness, wave);
             table = tables.end() - 1;
         }
-        const double from = grid.start - target.x;
-        illuminate(*table, target, from - 0.5 * line.separation, grid.spacing, 1, row, a);
-        illuminate(*table, target, from + 0.5 * line.separation, grid.spacing, -1, row, g);
+        illuminate(*table, target, grid, line.separation, row, a, g);
         row += target.size();
     }
     std::vector<Complex> out = join(a, g, joint, share);

@@ -21,6 +21,7 @@ namespace {
 
 constexpr double damping = 6.0;     // delta T, Np
 constexpr double faintest = 1e-4;   // of the pulse's spectral peak
+constexpr double hidden = 5e-4;     // the same for the targets: the ground takes the highest frequencies first
 constexpr double tolerance = 1e-4;  // of the strongest part, at the pulse's peak frequency
 
 /// Time grid that holds the wanted samples, starts before anything is sent and has a fast length.
@@ -169,12 +170,13 @@ class Engine {
         const Media media = media_at(scene_, tone.w.real(), delta_);
         const double fall = std::max(3.0, std::log(tone.loudness * care_ / tolerance));
         const double k_host = media.ground[host_.layer].k.real();
-        const double share = std::min(0.02, tolerance / care_ / tone.loudness);
+        const double share = std::min(0.05, tolerance / care_ / tone.loudness);
         const bool along = scene_.polarisation == Polarisation::along;
 
         std::vector<Scatterer> targets;
         double reach_in = 0.0, reach_between = 0.0;
-        for (std::size_t q = 0; q < scene_.targets.size(); ++q) {
+        const bool heard = tone.loudness > hidden / care_;
+        for (std::size_t q = 0; heard && q < scene_.targets.size(); ++q) {
             const RoundTarget& t = scene_.targets[q];
             const double above = t.depth - host_.top, below = host_.endless() ? 0.0 : host_.thickness - above;
             double nearest = host_.endless() ? above : std::min(above, below);
