@@ -2,7 +2,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <optional>
 
+#include "echo/transform.hpp"
 #include "wave/fourier.hpp"
 
 namespace gg {
@@ -119,37 +121,47 @@ Scene close_look(const Scene& scene, double x, double half, double time) {
     s.first = x - side * s.step;
     s.traces = std::min(2 * side + 1, 4096);
     const double wanted = std::ceil((time + 4.0 * pulse_width(scene) - s.start) / dt);
-    s.samples = static_cast<int>(std::clamp(wanted, 2.0, static_cast<double>(s.samples)));
+    s.samples = std::min(s.samples, fast_length(static_cast<int>(std::clamp(wanted, 2.0, 8192.0))));
     s.window = s.samples * dt;
     return look;
 }
+
+/// Care enough for a reading: 1 % of the strongest echo, against a dip of 5 %.
+constexpr double glance = 0.1;
 
 double sideways_rule(const Scene& scene, double depth) {
     const double v = effective_speed(scene.ground, depth, scene.pulse.centre_frequency).value;
     return std::sqrt(v * depth * pulse_width(scene) / 2.0);
 }
 
-}  // namespace
+/// Root mean square of the noise in what is read: in the record, or in the focused image before that is made 1.
+double noise_of(const Scene& scene, const Section& section, Reading reading) {
+    if (reading == Reading::raw) return rms(section.noise);
+    const Image noise = focused(scene, section.noise);
+    return noise.issue == Issue::none ? rms(noise.values) * noise.peak : 0.0;
+}
 
-Dip dip_sideways(const Scene& scene, const Section& section, Reading reading) {
-    if (!section.ok() || scene.targets.size() < 2 || section.traces < 3) return {};
+Dip dip_with(const Scene& scene, const Section& section, Reading reading, double sigma) {
     const RoundTarget& a = scene.targets[0].x <= scene.targets[1].x ? scene.targets[0] : scene.targets[1];
     const RoundTarget& b = &a == &scene.targets[0] ? scene.targets[1] : scene.targets[0];
     const double top_a = a.depth - a.radius, top_b = b.depth - b.radius, width = pulse_width(scene);
     if (reading == Reading::raw) {
         const Columns c{section.traces, section.samples, section.first,   section.step,
                         section.start,  section.dt,      &section.targets};
-        return read(c, a.x, b.x, time_to(scene, top_a), time_to(scene, top_b), width, rms(section.noise));
+        return read(c, a.x, b.x, time_to(scene, top_a), time_to(scene, top_b), width, sigma);
     }
     const Image image = focused(scene, section.targets);
     if (image.issue != Issue::none) return {};
-    // White noise through the same focusing, on the image's scale.
-    const Image noise = focused(scene, section.noise);
     const Columns c{image.traces, image.rows, image.first, image.step, 0.0, image.spacing, &image.values};
     const double v = effective_speed(scene.ground, a.depth, scene.pulse.centre_frequency).value;
-    const double sigma =
-        noise.issue == Issue::none && image.peak > 0.0 ? rms(noise.values) * noise.peak / image.peak : 0.0;
-    return read(c, a.x, b.x, top_a, top_b, 0.5 * v * width, sigma);
+    return read(c, a.x, b.x, top_a, top_b, 0.5 * v * width, image.peak > 0.0 ? sigma / image.peak : 0.0);
+}
+
+}  // namespace
+
+Dip dip_sideways(const Scene& scene, const Section& section, Reading reading) {
+    if (!section.ok() || scene.targets.size() < 2 || section.traces < 3) return {};
+    return dip_with(scene, section, reading, noise_of(scene, section, reading));
 }
 
 Dip dip_down(const std::vector<double>& trace, double dt, double early, double late, double sigma) {
@@ -199,6 +211,7 @@ Value smallest_gap(const Scene& scene, Reading reading) {
     const double drop = a.depth - b.depth, touch = a.radius + b.radius;
     const double low =
         std::max({std::sqrt(std::max(0.0, touch * touch - drop * drop)) * 1.01, 1e-3 * rule, 1.01 * 1e-4});
+    std::optional<double> sigma;  // hardly changes with the gap
     const auto apart = [&](double gap) {
         a.x = middle - 0.5 * gap;
         b.x = middle + 0.5 * gap;
@@ -207,7 +220,10 @@ Value smallest_gap(const Scene& scene, Reading reading) {
         const double far = std::hypot(aperture, depth) / depth;
         const Scene look =
             close_look(pair, middle, aperture, time_to(pair, depth) * (reading == Reading::raw ? 1.0 : far));
-        return dip_sideways(look, section_of(look), reading).apart();
+        const Section section = section_of(look, glance);
+        if (!section.ok() || section.traces < 3) return false;
+        if (!sigma) sigma = noise_of(look, section, reading);
+        return dip_with(look, section, reading, *sigma).apart();
     };
     return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule, apart);
 }
@@ -230,7 +246,7 @@ Value smallest_drop(const Scene& scene) {
     const auto apart = [&](double drop) {
         b.depth = a.depth + drop;
         const Scene look = close_look(pair, a.x, 0.0, scene.sampling.start + scene.sampling.window);
-        return dip_downwards(look, section_of(look)).apart();
+        return dip_downwards(look, section_of(look, glance)).apart();
     };
     return smallest(low, high, a.radius + b.radius + 0.5 * v * width, apart);
 }
@@ -253,7 +269,7 @@ Value smallest_diameter(const Scene& scene) {
         t.radius = 0.5 * diameter;
         t.depth = top + t.radius;
         const Scene look = close_look(one, t.x, 0.0, scene.sampling.start + scene.sampling.window);
-        return dip_downwards(look, section_of(look)).apart();
+        return dip_downwards(look, section_of(look, glance)).apart();
     };
     return smallest(low, high, 2.0 * wall + 0.5 * v * width, apart);
 }
