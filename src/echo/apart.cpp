@@ -88,26 +88,42 @@ Dip read(const Columns& c, double x1, double x2, double place1, double place2, d
     return dip;
 }
 
-/// Smallest value of `size` from which on apart(size) holds, between low and high, starting from a guess. 3 %.
+/// What a dip has over what it needs; below 0 it does not part.
+double margin(const Dip& dip) { return dip.depth > 0.0 ? dip.depth - dip.needed : -dip.needed; }
+
+/// Smallest value of `size` from which on margin_at(size) >= 0, between low and high, starting from a guess. 3 %.
 template <class F>
-Value smallest(double low, double high, double guess, const F& apart) {
-    constexpr double stride = 1.35;
-    double good = 0.0, bad = 0.0;
+Value smallest(double low, double high, double guess, const F& margin_at) {
+    constexpr double stride = 1.35, close = 1.03;
+    double good = 0.0, bad = 0.0, over = 0.0, under = 0.0;
     for (double at = std::clamp(guess, low, high);;) {
-        if (apart(at)) {
+        const double m = margin_at(at);
+        if (m >= 0.0) {
             good = at;
+            over = m;
             if (!(at > low) || bad > 0.0) break;
             at = std::max(low, at / stride);
         } else {
             bad = at;
+            under = m;
             if (good > 0.0) break;
             if (!(at < high)) return {0.0, Issue::no_solution};
             at = std::min(high, at * stride);
         }
     }
-    while (bad > 0.0 && good > 1.03 * bad) {
-        const double at = std::sqrt(good * bad);
-        (apart(at) ? good : bad) = at;
+    // Where the straight line between the two ends says, a little to the side of the end that stayed; every third
+    // time the middle, whatever the line says.
+    bool above = true;
+    for (int step = 1; bad > 0.0 && good > close * bad; ++step) {
+        double at = std::sqrt(good * bad);
+        if (step % 3 != 0) {
+            const double line = bad + (good - bad) * under / (under - over), side = 1.0 + 0.45 * (close - 1.0);
+            at = std::clamp(above ? line * side : line / side, bad * side, good / side);
+        }
+        const double m = margin_at(at);
+        above = m < 0.0;
+        (above ? bad : good) = at;
+        (above ? under : over) = m;
     }
     return {good, Issue::none};
 }
@@ -212,7 +228,7 @@ Value smallest_gap(const Scene& scene, Reading reading) {
     const double low =
         std::max({std::sqrt(std::max(0.0, touch * touch - drop * drop)) * 1.01, 1e-3 * rule, 1.01 * 1e-4});
     std::optional<double> sigma;  // hardly changes with the gap
-    const auto apart = [&](double gap) {
+    const auto margin_at = [&](double gap) {
         a.x = middle - 0.5 * gap;
         b.x = middle + 0.5 * gap;
         const double depth = std::max(a.depth, b.depth),
@@ -221,11 +237,11 @@ Value smallest_gap(const Scene& scene, Reading reading) {
         const Scene look =
             close_look(pair, middle, aperture, time_to(pair, depth) * (reading == Reading::raw ? 1.0 : far));
         const Section section = section_of(look, glance);
-        if (!section.ok() || section.traces < 3) return false;
+        if (!section.ok() || section.traces < 3) return -1.0;
         if (!sigma) sigma = noise_of(look, section, reading);
-        return dip_with(look, section, reading, *sigma).apart();
+        return margin(dip_with(look, section, reading, *sigma));
     };
-    return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule, apart);
+    return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule, margin_at);
 }
 
 Value smallest_drop(const Scene& scene) {
@@ -243,12 +259,12 @@ Value smallest_drop(const Scene& scene) {
         last ? a.depth + 12.0 * v * width : top_of(scene.ground, layer) + scene.ground.slabs[layer].thickness;
     const double low = 1.01 * (a.radius + b.radius), high = bottom - b.radius - a.depth - 1e-6;
     if (!(high > low)) return {0.0, Issue::no_solution};
-    const auto apart = [&](double drop) {
+    const auto margin_at = [&](double drop) {
         b.depth = a.depth + drop;
         const Scene look = close_look(pair, a.x, 0.0, scene.sampling.start + scene.sampling.window);
-        return dip_downwards(look, section_of(look, glance)).apart();
+        return margin(dip_downwards(look, section_of(look, glance)));
     };
-    return smallest(low, high, a.radius + b.radius + 0.5 * v * width, apart);
+    return smallest(low, high, a.radius + b.radius + 0.5 * v * width, margin_at);
 }
 
 Value smallest_diameter(const Scene& scene) {
@@ -265,13 +281,13 @@ Value smallest_diameter(const Scene& scene) {
     const double low = std::max(2.1 * wall, 0.1 * v * width),
                  high = std::min({room, 19.9, 2.0 * wall + 6.0 * v * width});
     if (!(high > low)) return {0.0, Issue::no_solution};
-    const auto apart = [&](double diameter) {
+    const auto margin_at = [&](double diameter) {
         t.radius = 0.5 * diameter;
         t.depth = top + t.radius;
         const Scene look = close_look(one, t.x, 0.0, scene.sampling.start + scene.sampling.window);
-        return dip_downwards(look, section_of(look, glance)).apart();
+        return margin(dip_downwards(look, section_of(look, glance)));
     };
-    return smallest(low, high, 2.0 * wall + 0.5 * v * width, apart);
+    return smallest(low, high, 2.0 * wall + 0.5 * v * width, margin_at);
 }
 
 }  // namespace gg

@@ -10,7 +10,8 @@
 namespace gg {
 namespace {
 
-using Matrix = Eigen::Matrix<Complex, Eigen::Dynamic, Eigen::Dynamic, Eigen::RowMajor>;
+/// Single precision: entries are near one, and four to five digits are wanted.
+using Matrix = Eigen::Matrix<std::complex<float>, Eigen::Dynamic, Eigen::Dynamic, Eigen::RowMajor>;
 
 Complex power_of_j(int n) {
     constexpr Complex powers[4] = {{1, 0}, {0, 1}, {-1, 0}, {0, -1}};
@@ -141,8 +142,8 @@ void fill(Matrix& C, int row, int column, const Scatterer& q, const Scatterer& p
                 path += sign * f.h[size] * (s < 0 ? std::conj(turns[size]) : turns[size]);
             }
             const Complex value = q.root[std::abs(m)] * path * p.root[std::abs(n)];
-            C(row + M + m, column + N + n) = value;
-            if (!same) C(column + N - n, row + M - m) = ((n + m) & 1) ? -value : value;
+            C(row + M + m, column + N + n) = std::complex<float>(value);
+            if (!same) C(column + N - n, row + M - m) = std::complex<float>(((n + m) & 1) ? -value : value);
         }
     }
 }

@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cmath>
 
+#include "echo/fast_complex.hpp"
+
 namespace gg {
 namespace {
 
@@ -13,26 +15,26 @@ constexpr double euler_gamma = 0.57721566490153286061;
 std::vector<Complex> bessel_j(Complex z, int count) {
     const double size = std::abs(z);
     // Start where J is some 1e-17 of its largest: well past both the order and the argument.
-    const double turn = std::max(size, static_cast<double>(count));
-    const int top = static_cast<int>(turn + 14.0 + 7.0 * std::cbrt(turn));
+    const double far = std::max(size, static_cast<double>(count));
+    const int top = static_cast<int>(far + 14.0 + 7.0 * std::cbrt(far));
     std::vector<Complex> f(static_cast<std::size_t>(top) + 2);
     f[top + 1] = 0.0;
     f[top] = 1e-280;
-    const Complex two_over_z = 2.0 / z;
+    const Cx two_over_z = 2.0 / z;
     for (int n = top; n > 0; --n) {
-        f[n - 1] = static_cast<double>(n) * two_over_z * f[n] - f[n + 1];
+        f[n - 1] = static_cast<double>(n) * (two_over_z * Cx{f[n]}) - Cx{f[n + 1]};
         if (std::abs(f[n - 1].real()) + std::abs(f[n - 1].imag()) >
             1e200) {  // keep in range; what falls to 0 is nothing
             for (int k = n - 1; k <= top; ++k) f[k] *= 1e-220;
         }
     }
     // exp(jz) = J0 + 2 sum j^n J_n.
-    Complex sum = f[0], turned = 1.0;
+    Cx sum = f[0], turned{2.0};
     for (int n = 1; n <= top; ++n) {
-        turned *= i1;
-        sum += 2.0 * turned * f[n];
+        turned = turn(turned);
+        sum += turned * Cx{f[n]};
     }
-    const Complex norm = std::exp(i1 * z) / sum;
+    const Complex norm = std::exp(i1 * z) / Complex(sum);
     f.resize(static_cast<std::size_t>(count));
     for (Complex& value : f) value *= norm;
     return f;
@@ -50,18 +52,18 @@ Complex bessel_y0(Complex z, const std::vector<Complex>& j) {
 Complex hankel_log_slope(Complex z) {
     // p + iq of the first kind, mirrored to the second: -1/(2z) - j - (j/z) K,  K = a1/(2(z - j) + a2/(2(z - 2j) +
     // ...)), a_k = (k - 1/2)^2.
-    const Complex tiny = 1e-300;
-    Complex value = tiny, c = value, d = 0.0;
-    for (int k = 1; k < 500; ++k) {
+    const Cx start = 2.0 * (Cx{z} - Cx{0.0, 1.0});
+    Cx c, d = Cx{1.0} / start, value = 0.25 * d;
+    for (int k = 2; k < 500; ++k) {
         const double a = (k - 0.5) * (k - 0.5);
-        const Complex b = 2.0 * (z - static_cast<double>(k) * i1);
-        d = 1.0 / (b + a * d);
-        c = b + a / c;
-        const Complex factor = c * d;
-        value *= factor;
-        if (std::abs(factor.real() - 1.0) + std::abs(factor.imag()) < 1e-15) break;
+        const Cx b = 2.0 * (Cx{z} - Cx{0.0, static_cast<double>(k)});
+        d = Cx{1.0} / (b + a * d);
+        c = k == 2 ? b : b + Cx{a} / c;
+        const Cx factor = c * d;
+        value = value * factor;
+        if (std::fabs(factor.re - 1.0) + std::fabs(factor.im) < 1e-15) break;
     }
-    return -0.5 / z - i1 - i1 / z * value;
+    return -0.5 / z - i1 - i1 / z * Complex(value);
 }
 
 }  // namespace
