@@ -161,16 +161,22 @@ struct Table {
     }
 };
 
-/// out[i] = sign * sum_t weight[t] in[i + t].
-void interpolate(const std::array<float, taps>& weight, float sign, const float* in, float* out, int width) {
+/// out[i] = sign * sum_t weight[t] in[i + t], for real and imaginary parts.
+void interpolate(const std::array<float, taps>& weight, float sign, const float* re, const float* im, float* out_re,
+                 float* out_im, int width) {
     for (int from = 0; from < width; from += lane) {
-        Four sum0{}, sum1{};
+        Four re0{}, re1{}, im0{}, im1{};
         for (int t = 0; t < taps; ++t) {
-            sum0 += weight[t] * load(in + from + t);
-            sum1 += weight[t] * load(in + from + t + 4);
+            const float w = weight[t];
+            re0 += w * load(re + from + t);
+            re1 += w * load(re + from + t + 4);
+            im0 += w * load(im + from + t);
+            im1 += w * load(im + from + t + 4);
         }
-        store(out + from, sign * sum0);
-        store(out + from + 4, sign * sum1);
+        store(out_re + from, sign * re0);
+        store(out_re + from + 4, sign * re1);
+        store(out_im + from, sign * im0);
+        store(out_im + from + 4, sign * im1);
     }
 }
 
@@ -201,8 +207,9 @@ void illuminate(const Table& table, const Scatterer& target, const Grid& grid, d
     const auto read = [&](const Reading& reading, int from, float sign, int to_row, Rows& out) {
         for (int p = 0; p < 2; ++p) {
             const std::size_t to = out.at(to_row) + static_cast<std::size_t>(p * grid.half);
-            interpolate(reading.weight[p], sign, re.data() + from + reading.skip[p], out.re.data() + to, grid.half);
-            interpolate(reading.weight[p], sign, im.data() + from + reading.skip[p], out.im.data() + to, grid.half);
+            const int at = from + reading.skip[p];
+            interpolate(reading.weight[p], sign, re.data() + at, im.data() + at, out.re.data() + to, out.im.data() + to,
+                        grid.half);
         }
     };
     Cx turned{1.0};
