@@ -150,10 +150,17 @@ double sideways_rule(const Scene& scene, double depth) {
     return std::sqrt(v * depth * pulse_width(scene) / 2.0);
 }
 
+/// Depth past which nothing is read in a focused image, m: both centres and two pulses more.
+double read_down_to(const Scene& scene) {
+    const double depth = std::max(scene.targets[0].depth, scene.targets[1].depth);
+    const double v = effective_speed(scene.ground, depth, scene.pulse.centre_frequency).value;
+    return depth + v * pulse_width(scene);
+}
+
 /// Root mean square of the noise in what is read: in the record, or in the focused image before that is made 1.
 double noise_of(const Scene& scene, const Section& section, Reading reading) {
     if (reading == Reading::raw) return rms(section.noise);
-    const Image noise = focused(scene, section.noise);
+    const Image noise = focused(scene, section.noise, read_down_to(scene));
     return noise.issue == Issue::none ? rms(noise.values) * noise.peak : 0.0;
 }
 
@@ -166,7 +173,7 @@ Dip dip_with(const Scene& scene, const Section& section, Reading reading, double
                         section.start,  section.dt,      &section.targets};
         return read(c, a.x, b.x, time_to(scene, top_a), time_to(scene, top_b), width, sigma);
     }
-    const Image image = focused(scene, section.targets);
+    const Image image = focused(scene, section.targets, read_down_to(scene));
     if (image.issue != Issue::none) return {};
     const Columns c{image.traces, image.rows, image.first, image.step, 0.0, image.spacing, &image.values};
     const double v = effective_speed(scene.ground, a.depth, scene.pulse.centre_frequency).value;

@@ -44,7 +44,7 @@ std::vector<double> delays_of(const Scene& scene) {
 
 }  // namespace
 
-Image focused(const Scene& scene, const std::vector<double>& record) {
+Image focused(const Scene& scene, const std::vector<double>& record, double down_to) {
     const Sampling& s = scene.sampling;
     Image image;
     const std::size_t traces = static_cast<std::size_t>(std::max(0, s.traces)),
@@ -75,9 +75,10 @@ Image focused(const Scene& scene, const std::vector<double>& record) {
     const double top = band_of(scene.pulse, 40.0).high;  // Hz; past it there is nothing but noise
     double slowest = speed_of_light;
     for (const double v : speed) slowest = std::min(slowest, v);
-    const double deepest = depth_after(scene.ground, 0.5 * (s.start + s.window), scene.pulse.centre_frequency).value;
+    const double deepest =
+        std::min(down_to, depth_after(scene.ground, 0.5 * (s.start + s.window), scene.pulse.centre_frequency).value);
     image.spacing = slowest / (6.0 * top);
-    image.rows = std::clamp(static_cast<int>(deepest / image.spacing) + 1, 2, 2048);
+    image.rows = fast_length(std::clamp(static_cast<int>(deepest / image.spacing) + 1, 2, 2048));
     image.spacing = std::max(image.spacing, deepest / image.rows);
 
     // Every wave's phase at the surface and its step per row in each layer; then all waves summed at each row.

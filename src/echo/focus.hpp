@@ -23,12 +23,13 @@ struct Image {
 
 /// @param scene   ground as it is believed to be, antenna and sampling of the record
 /// @param record  traces x samples, trace after trace: a Section's targets, with noise or without
+/// @param down_to  m, where the picture may end, if the record does not end it sooner
 /// Phase-shift migration (Gazdag 1978, Geophysics 43(7), from memory), exploding reflectors: every layer at half its
 /// speed at the centre frequency, its phase undone layer by layer, so refraction at each boundary is followed and no
 /// travel times are searched; chosen over Stolt's map and Kirchhoff's sum because it is exact for flat layers at the
 /// same price. Attenuation is left as recorded. Transmitter and receiver apart are first moved together: t^2 -
 /// (separation / speed)^2, speed the mean one down to there. A wrong ground gives a wrong depth and a smile or a frown,
 /// as in the field.
-Image focused(const Scene& scene, const std::vector<double>& record);
+Image focused(const Scene& scene, const std::vector<double>& record, double down_to = 1e9);
 
 }  // namespace gg
