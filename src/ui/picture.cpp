@@ -122,9 +122,11 @@ void picture_ui(Screen& s, Grip& grip, Point pointer) {
         s.canvas().box({area.x + 12, area.y + 10, width, height}, s.colours.panel, 8);
         s.canvas().box({area.x + 12, area.y + 10, 4, height}, s.colours.warn, 2);
         s.paragraph(area.x + 28, area.y + 18, width - 24, words, {s.small, s.colours.warn});
-    } else if (view.view == View::beam) {
-        hint_ui(s, grip);  // where a first visit opens; in the other views it would lie on the grips
     }
+    if (session.stale.empty() && view.view == View::beam)
+        hint_ui(s, grip);
+    else
+        grip.hint_since = -1.0;  // a first visit opens in Beam; in the other views the hint would lie on the grips
 }
 
 void tabs_ui(Screen& s) {

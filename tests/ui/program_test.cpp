@@ -187,6 +187,12 @@ TEST_CASE("every grip of every picture drags its number, and undo takes the drag
             CHECK(b.program.plan() == before);
             b.press("redo");
             CHECK(!(b.program.plan() == before));
+            // Whatever the drag set moving comes to rest: nothing is drawn any more.
+            for (int i = 0; i < 200 && std::isfinite(b.program.wake_after()); ++i) {
+                b.now += std::max(0.016, b.program.wake_after());
+                b.program.frame(b.now);
+            }
+            CHECK(std::isinf(b.program.wake_after()));
         }
     }
 }
