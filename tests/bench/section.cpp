@@ -49,7 +49,7 @@ double time_section(const Scene& s, int runs = 5) {
         [&] {
             const Section section = section_of(s);
             if (!section.ok()) std::printf("refused: %s\n", section.reason.c_str());
-            kept = kept + section.ok() ? section.targets.empty() ? section.layers[1] : section.targets[1] : 0.0;
+            if (section.ok()) kept = kept + (section.targets.empty() ? section.layers[1] : section.targets[1]);
         },
         runs);
 }
