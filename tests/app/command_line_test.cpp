@@ -58,7 +58,7 @@ TEST_CASE("answers writes the same JSON as the library, from standard input") {
     CHECK(result.status == 0);
     CHECK(result.err.empty());
     const Plan plan = read_plan(demo_plan()).plan;
-    CHECK(result.out == write_answers(plan, answers_for(plan)));
+    CHECK(result.out == write_answers(plan, settled_answers_for(plan)));
     CHECK(has(result.out, std::string(caution())));
 }
 
@@ -80,7 +80,7 @@ TEST_CASE("picture writes an SVG of each view, at the size and in the theme and 
 
 TEST_CASE("check tells what is thin or poor, and its status says whether anything is") {
     const Run result = run({"check", "-"}, demo_plan());
-    const Answers answers = answers_for(read_plan(demo_plan()).plan);
+    const Answers answers = settled_answers_for(read_plan(demo_plan()).plan);
     bool poor = false;
     for (const Answer& answer : answers.list) {
         poor = poor || answer.grade == Grade::poor;
