@@ -199,7 +199,8 @@ int run_command_line(const std::vector<std::string>& words, std::istream& in, st
     }
     const std::optional<Plan> plan = plan_of(order, streams);
     if (!plan) return exit_failed;
-    if (order.command == Command::answers) return give(order, streams, write_answers(*plan, settled_answers_for(*plan)));
+    if (order.command == Command::answers)
+        return give(order, streams, write_answers(*plan, settled_answers_for(*plan)));
     if (order.command == Command::picture) return give(order, streams, picture(order, *plan));
     if (order.command == Command::section) return section(order, *plan, streams);
     return check(order, *plan, streams);
