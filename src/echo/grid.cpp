@@ -274,7 +274,7 @@ std::vector<Complex> join(const Rows& a, const Rows& g, const std::vector<Comple
 
 }  // namespace
 
-Grid grid_for(const Line& line, double widest) {
+Grid grid_for(const Track& line, double widest) {
     Grid grid;
     grid.spacing = pi / (2.0 * widest * oversampling);
     grid.start = line.first - (taps / 2) * grid.spacing;
@@ -283,7 +283,7 @@ Grid grid_for(const Line& line, double widest) {
     return grid;
 }
 
-std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vector<Scatterer>& targets,
+std::vector<Complex> echo_on(const Grid& grid, const Track& line, const std::vector<Scatterer>& targets,
                              const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
                              double share) {
     int rows = 0;
@@ -321,7 +321,7 @@ std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vect
     return out;
 }
 
-void onto_traces(const Grid& grid, const Line& line, const std::vector<Complex>& values, Complex factor, Complex* out,
+void onto_traces(const Grid& grid, const Track& line, const std::vector<Complex>& values, Complex factor, Complex* out,
                  std::size_t stride) {
     static const Weights table;
     for (int trace = 0; trace < line.traces; ++trace) {

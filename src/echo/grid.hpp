@@ -14,7 +14,7 @@ struct Grid {
 };
 
 /// What the line needs of the grid.
-struct Line {
+struct Track {
     double first = 0.0, step = 0.0;  ///< m
     int traces = 0;
     double separation = 0.0;  ///< m
@@ -22,19 +22,19 @@ struct Line {
 };
 
 /// @param widest  1/m, the largest horizontal wave number that reaches a target; an echo's is twice that
-Grid grid_for(const Line& line, double widest);
+Grid grid_for(const Track& line, double widest);
 
 /// Echo of all targets on the grid, up to the constant of reciprocity: sum (-1)^n g_{q,-n} (T a)_{qn},
 /// with a and g the incident coefficients of a source at the transmitter and one at the receiver.
 /// The coefficients have half the echo's bandwidth and depend on the distance from the target alone: they are summed
 /// over kx once per depth, at distances 2 * spacing apart on one side, and interpolated to where they are needed.
-std::vector<Complex> echo_on(const Grid& grid, const Line& line, const std::vector<Scatterer>& targets,
+std::vector<Complex> echo_on(const Grid& grid, const Track& line, const std::vector<Scatterer>& targets,
                              const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
                              double share);
 
 /// Adds `factor` times the values on the grid, interpolated, to one number per trace, `stride` apart.
 /// Windowed sinc of 16 points over a 1.35-fold oversampled echo: 2e-4 of what stands at the band's edge, less inside.
-void onto_traces(const Grid& grid, const Line& line, const std::vector<Complex>& values, Complex factor, Complex* out,
+void onto_traces(const Grid& grid, const Track& line, const std::vector<Complex>& values, Complex factor, Complex* out,
                  std::size_t stride);
 
 }  // namespace gg

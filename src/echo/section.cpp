@@ -3,7 +3,7 @@
 ///   answer of all targets (coupling) -> echo by reciprocity -> traces; then one inverse transform per trace and
 ///   exp(+delta t) undone.
 /// What sets the accuracy: the small negative imaginary part of the frequency damps what comes after T, which would
-/// wrap round to early times, by exp(-delta T); the spacing of kx closes the line on itself after Line::period, from
+/// wrap round to early times, by exp(-delta T); the spacing of kx closes the line on itself after Track::period, from
 /// where lateral waves of the images arrive; spectra are cut where the pulse has fallen to `faintest`.
 #include <algorithm>
 #include <cmath>
@@ -270,7 +270,7 @@ class Engine {
     Host host_;
     double delta_;
     std::vector<double> gain_;  ///< undoes the damping, sample by sample
-    Line line_;
+    Track line_;
     std::size_t bins_ = 0;
     Transform transform_;
     std::vector<Complex> field_;  ///< rows of half spectra: traces, then layers, then direct
