@@ -26,10 +26,7 @@ static double by_travel_times(const Answer& sideways, bool settled) {
 bool PairWords::measured() const { return seen && seen->separation && seen->separation->raw.lower_peak > 0; }
 
 PairPicture::Verdict PairWords::verdict() const {
-    if (!measured()) return answers.pair.verdict;
-    return seen->separation->raw.apart()       ? PairPicture::Verdict::apart
-           : seen->separation->focused.apart() ? PairPicture::Verdict::merging
-                                               : PairPicture::Verdict::one;
+    return measured() ? verdict_of(*seen->separation) : answers.pair.verdict;
 }
 
 std::string PairWords::sentence() const {

@@ -78,6 +78,9 @@ Separation separation_for(const Plan& plan, Polarisation polarisation = Polarisa
 /// One half of it: the dip and the least gap of one reading.
 void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out);
 
+/// Apart: in the raw section; merging: only once focused; one: in neither.
+PairPicture::Verdict verdict_of(const Separation& separation);
+
 /// Puts what was measured in the place of what travel times tell: the answer "apart.sideways" becomes the least gap in
 /// the raw section (the travel-time value stands beside it as a rule), "apart.focused" is added, and the verdict of the
 /// pair picture follows. The ends of the range keep the ratio to the likely value that the travel times give.

@@ -5,6 +5,11 @@
 
 namespace gg {
 
+PairPicture::Verdict verdict_of(const Separation& separation) {
+    using Verdict = PairPicture::Verdict;
+    return separation.raw.apart() ? Verdict::apart : separation.focused.apart() ? Verdict::merging : Verdict::one;
+}
+
 void settle(Answers& answers, const Plan& plan, const Separation& separation) {
     if (!(separation.raw.lower_peak > 0.0) || answers.find("apart.focused")) return;
     const auto at = std::find_if(answers.list.begin(), answers.list.end(),
@@ -39,10 +44,7 @@ void settle(Answers& answers, const Plan& plan, const Separation& separation) {
     *at = measured;
     answers.list.insert(at + 1, focused);
 
-    using Verdict = PairPicture::Verdict;
-    answers.pair.verdict = separation.raw.apart()       ? Verdict::apart
-                           : separation.focused.apart() ? Verdict::merging
-                                                        : Verdict::one;
+    answers.pair.verdict = verdict_of(separation);
     answers.pair.dip = separation.raw.depth;
 }
 
