@@ -1,62 +1,46 @@
 #include "echo/grid.hpp"
 
-#include <algorithm>
-#include <array>
-#include <cmath>
-
-#include "echo/lanes.hpp"
-
 namespace gg {
 namespace {
 
+constexpr int taps = Grid::taps;
 constexpr double oversampling = 1.5;
-constexpr int taps = 16;
-constexpr int lane = 8;  // two Fours
+constexpr int enough_ahead = 4;  // from here on a whole number of spacings is at most a quarter finer than needed
+constexpr double octave_steps = 12.0;
 
-int in_lanes(int n) { return (n + lane - 1) / lane * lane; }
+Eight load(const float* from) { return Eight::load(from); }
 
 /// Windowed-sinc weights of the points floor - 7 .. floor + 8 for a place `part` (0..1) past the floor.
-std::array<double, taps> weights(double part) {
+Grid::Weights weights(double part) {
     constexpr double half = taps / 2, shape = pi * half * (1.0 - 1.0 / oversampling);
     const double wave = std::sin(pi * part) / pi;
-    std::array<double, taps> out{};
+    Grid::Weights out{};
     for (int i = 0; i < taps; ++i) {
         const int tap = i + 1 - taps / 2;
         const double d = part - tap, inside = 1.0 - d * d / (half * half);
         if (!(inside > 0.0)) continue;
         const double sinc = std::fabs(d) < 1e-9 ? 1.0 : ((tap & 1) ? -wave : wave) / d;
-        out[i] = sinc * std::exp(shape * (std::sqrt(inside) - 1.0));
+        out[i] = static_cast<float>(sinc * std::exp(shape * (std::sqrt(inside) - 1.0)));
     }
     return out;
 }
 
 /// The same for many places, between entries of a table: linear in 1/512 of a point is good to 5e-6.
-struct Weights {
-    static constexpr int count = 512;
-    std::array<std::array<double, taps>, count + 1> at;
-    Weights() {
-        for (int i = 0; i <= count; ++i) at[i] = weights(static_cast<double>(i) / count);
-    }
-};
-
-/// Rows of numbers, real and imaginary parts apart.
-struct Rows {
-    int width = 0;
-    std::vector<float> re, im;
-    Rows(int rows, int w) : width(in_lanes(w)), re(static_cast<std::size_t>(rows) * width), im(re.size()) {}
-    std::size_t at(int row) const { return static_cast<std::size_t>(row) * width; }
-    /// Largest magnitude of each row, from every third number.
-    std::vector<double> strongest() const {
-        std::vector<double> out;
-        for (std::size_t from = 0; from < re.size(); from += width) {
-            float most = 0.0F;
-            for (int i = 0; i < width; i += 3)
-                most = std::max(most, re[from + i] * re[from + i] + im[from + i] * im[from + i]);
-            out.push_back(std::sqrt(static_cast<double>(most)));
+Grid::Weights quick_weights(double part) {
+    constexpr int count = 512;
+    struct All {
+        std::array<Grid::Weights, count + 1> at;
+        All() {
+            for (int i = 0; i <= count; ++i) at[i] = weights(static_cast<double>(i) / count);
         }
-        return out;
-    }
-};
+    };
+    static const All all;
+    const int low = std::min(static_cast<int>(part * count), count - 1);
+    const float rest = static_cast<float>(part * count - low);
+    Grid::Weights out;
+    for (int t = 0; t < taps; ++t) out[t] = all.at[low][t] + rest * (all.at[low + 1][t] - all.at[low][t]);
+    return out;
+}
 
 /// cos and sin of kx d at d = i * spacing, a row per kx.
 Rows waves(double spacing, int distances, double dk, int count) {
@@ -81,265 +65,236 @@ Rows waves(double spacing, int distances, double dk, int count) {
     return out;
 }
 
-/// out[column][i] = sum_k wave[k][i] * spectrum[k][column]; columns in fours.
-void sum_waves(const float* wave, const float* spectrum, int count, int width, int columns, float* out) {
+/// out[column][middle + i] = sum_k wave[k][i] * spectrum[k][column], and its mirror image (times `mirror`) at
+/// middle - i; columns in fours.
+void sum_waves(const Rows& wave, bool sine, const std::vector<float>& spectrum, int count, int columns, int middle,
+               int width, std::vector<float>& out) {
+    const float* const waves = (sine ? wave.im : wave.re).data();
+    const float mirror = sine ? -1.0F : 1.0F;
     for (int column = 0; column < columns; column += 4) {
-        for (int from = 0; from < width; from += lane) {
-            Four sum[4][2] = {};
+        for (int from = 0; from <= middle; from += lanes) {
+            Eight sum[4] = {};
             for (int k = 0; k < count; ++k) {
-                const float* const w = wave + static_cast<std::size_t>(k) * width + from;
-                const float* const s = spectrum + static_cast<std::size_t>(k) * columns + column;
-                const Four w0 = load(w), w1 = load(w + 4);
-                for (int c = 0; c < 4; ++c) {
-                    sum[c][0] += w0 * s[c];
-                    sum[c][1] += w1 * s[c];
-                }
+                const Eight w = load(waves + wave.at(k) + from);
+                const float* const s = spectrum.data() + static_cast<std::size_t>(k) * columns + column;
+                for (int c = 0; c < 4; ++c) sum[c] += s[c] * w;
             }
             for (int c = 0; c < 4; ++c) {
-                float* const to = out + static_cast<std::size_t>(column + c) * width + from;
-                store(to, sum[c][0]);
-                store(to + 4, sum[c][1]);
+                float* const to = out.data() + static_cast<std::size_t>(column + c) * width + middle;
+                sum[c].store(to + from);
+                for (int i = 0; i < lanes && from + i <= middle; ++i) to[-(from + i)] = mirror * sum[c][i];
             }
         }
     }
 }
 
-/// Incident coefficients at one depth for sources at a distance d = i * spacing to the right. With alpha and beta the
-/// spectra of order n at +kx and, but for (-1)^n, at -kx:
-///   a_n, a_-n = (-j)^n (C +- S),  C = sum (alpha + (-1)^n beta) cos kx d,  S = j sum (alpha - (-1)^n beta) sin kx d.
-struct Table {
-    double above;
-    int order, width;
-    std::vector<float> even, odd;  ///< re C_n, im C_n and so on, a column of `width` each
+/// out[i] = sum_t weight[t] in[i + t].
+void interpolate(const Grid::Weights& weight, const float* in, float* out, int width) {
+    for (int from = 0; from < width; from += lanes) {
+        Eight sum = weight[0] * load(in + from);
+        for (int t = 1; t < taps; ++t) sum += weight[t] * load(in + from + t);
+        sum.store(out + from);
+    }
+}
 
-    Table(const Scatterer& target, int top_order, const Host& host, const Spectra& spectra, int count, double loudness,
-          const Rows& wave)
-        : above(target.above), order(top_order), width(wave.width) {
-        const int columns = (2 * order + 2 + 3) / 4 * 4;
-        std::vector<float> sums(static_cast<std::size_t>(count) * columns), differences(sums.size());
-        const Cx inverse_k = Cx{1.0} / spectra.k;
-        for (int k = 0; k < count; ++k) {
-            const std::size_t at = static_cast<std::size_t>(k);
-            const double kx = k * spectra.spacing;
-            const Cx kz = spectra.kz[at], sent = (spectra.spacing / loudness * (k == 0 ? 0.5 : 1.0)) * spectra.down[at];
-            const Cx down = sent * target.to_top[at];
-            const Cx up = host.endless() ? Cx{} : sent * spectra.below[at] * spectra.pass[at] * target.to_bottom[at];
-            const Cx E = (Cx{kx} + turn(kz)) * inverse_k, E_inverse = (Cx{kx} - turn(kz)) * inverse_k;
-            Cx P{1.0}, Q{1.0};
-            double sign = 1.0;
-            for (int n = 0; n <= order; ++n, P = P * E, Q = Q * E_inverse, sign = -sign) {
-                const Cx alpha = down * Q + up * P, beta = sign * (down * P + up * Q), sum = alpha + beta,
-                         difference = turn(alpha - beta);
-                const std::size_t to = at * columns + 2 * static_cast<std::size_t>(n);
-                sums[to] = static_cast<float>(sum.re);
-                sums[to + 1] = static_cast<float>(sum.im);
-                differences[to] = static_cast<float>(difference.re);
-                differences[to + 1] = static_cast<float>(difference.im);
+/// A place between the points of a row: whole points on, and weights for the rest.
+struct Between {
+    int skip;
+    Grid::Weights weight;
+    explicit Between(double place) : skip(static_cast<int>(std::floor(place))), weight(quick_weights(place - skip)) {}
+};
+
+/// Rows of G^-1 u on every second place, and which of them the echo needs.
+class Illumination {
+  public:
+    Illumination(const Grid& grid, const Track& track, const std::vector<Scatterer>& targets,
+                 const std::vector<const Table*>& tables, const std::vector<Cx>& G, double share)
+        : grid_(grid), G_(G), share_(share) {
+        for (const Scatterer& target : targets) size_ += target.rows();
+        rows_ = Rows(size_, grid.places + lanes);
+        t_ = Rows(1, grid.places + lanes);
+        for (std::size_t q = 0; q < targets.size(); ++q) {
+            const Table& table = *tables[q];
+            const Between at((grid.first_place(track) - targets[q].x) / (2.0 * grid.spacing) + grid.middle + 1 -
+                             taps / 2);
+            for (int n = 0; n <= targets[q].order(); ++n) {
+                add(table, table.cosines, n, at, targets[q].strength[n]);
+                if (n > 0) add(table, table.sines, n, at, targets[q].strength[n]);
             }
         }
-        even.resize(static_cast<std::size_t>(columns) * width);
-        odd.resize(even.size());
-        sum_waves(wave.re.data(), sums.data(), count, width, columns, even.data());
-        sum_waves(wave.im.data(), differences.data(), count, width, columns, odd.data());
     }
+    const Rows& rows() const { return rows_; }
+    bool matters(int row) const { return most_[row] * most_[row] > 0.02 * share_ * largest_; }
+    int size() const { return size_; }
 
-    /// a_n (side 1) or a_-n (side -1) at distances (first + i) * spacing of either side, scaled.
-    void lay_out(int n, int side, Cx scale, int first, int count, float* re, float* im) const {
-        const float* const C = even.data() + 2 * static_cast<std::size_t>(n) * width;
-        const float* const S = odd.data() + 2 * static_cast<std::size_t>(n) * width;
-        const float s_re = static_cast<float>(scale.re), s_im = static_cast<float>(scale.im);
-        const auto put = [&](int i, int at, float turned) {
-            const float a_re = C[at] + turned * S[at], a_im = C[width + at] + turned * S[width + at];
-            re[i] = s_re * a_re - s_im * a_im;
-            im[i] = s_re * a_im + s_im * a_re;
-        };
-        const float right = static_cast<float>(side);
-        const int zero = std::clamp(-first, 0, count), end = std::clamp(width - first, zero, count);
-        for (int i = 0; i < zero; ++i) put(i, std::min(-first - i, width - 1), -right);
-        for (int i = zero; i < end; ++i) put(i, first + i, right);
-        for (int i = end; i < count; ++i) re[i] = im[i] = 0.0F;  // lanes that nobody reads
-    }
-};
-
-/// out[i] = sign * sum_t weight[t] in[i + t], for real and imaginary parts.
-void interpolate(const std::array<float, taps>& weight, float sign, const float* re, const float* im, float* out_re,
-                 float* out_im, int width) {
-    for (int from = 0; from < width; from += lane) {
-        Four re0{}, re1{}, im0{}, im1{};
-        for (int t = 0; t < taps; ++t) {
-            const float w = weight[t];
-            re0 += w * load(re + from + t);
-            re1 += w * load(re + from + t + 4);
-            im0 += w * load(im + from + t);
-            im1 += w * load(im + from + t + 4);
+  private:
+    /// The next row: (strength * wave - sum_j G_ij b_j) / G_ii over the j that count.
+    void add(const Table& table, const std::vector<float>& waves, int n, const Between& at, Cx strength) {
+        const int i = static_cast<int>(most_.size());
+        const float* const from = waves.data() + 2 * static_cast<std::size_t>(n) * table.width + at.skip;
+        interpolate(at.weight, from, t_.re.data(), grid_.places);
+        interpolate(at.weight, from + table.width, t_.im.data(), grid_.places);
+        const Cx* const line = &G_[static_cast<std::size_t>(i) * size_];
+        const Cx inverse = Cx{1.0} / line[i], own = strength * inverse;
+        const double alone = std::sqrt(norm(own)) * t_.strongest(0, grid_.places);
+        largest_ = std::max(largest_, alone * alone);
+        parts_.clear();
+        parts_.push_back({t_.re.data(), t_.im.data(), static_cast<float>(own.re), static_cast<float>(own.im)});
+        for (int j = 0; j < i; ++j) {
+            const Cx g = -(line[j] * inverse);
+            if (std::sqrt(norm(g)) * most_[j] * std::max(alone, most_[j]) > 0.02 * share_ * largest_)
+                parts_.push_back({rows_.re.data() + rows_.at(j), rows_.im.data() + rows_.at(j),
+                                  static_cast<float>(g.re), static_cast<float>(g.im)});
         }
-        store(out_re + from, sign * re0);
-        store(out_re + from + 4, sign * re1);
-        store(out_im + from, sign * im0);
-        store(out_im + from + 4, sign * im1);
-    }
-}
-
-/// How a row of a table is read at distances first + i * spacing, half as far apart as its own.
-struct Reading {
-    int left;     ///< of the table, left of the first distance
-    int skip[2];  ///< from there on for even i, for odd i
-    std::array<float, taps> weight[2];
-
-    Reading(double first, double spacing) : left(static_cast<int>(std::floor(first / (2.0 * spacing)))) {
-        for (int p = 0; p < 2; ++p) {
-            const double place = first / (2.0 * spacing) + 0.5 * p, floor = std::floor(place);
-            skip[p] = static_cast<int>(floor) - left;
-            const std::array<double, taps> w = weights(place - floor);
-            for (int t = 0; t < taps; ++t) weight[p][t] = static_cast<float>(w[t]);
+        float* const to_re = rows_.re.data() + rows_.at(i);
+        float* const to_im = rows_.im.data() + rows_.at(i);
+        for (int k = 0; k < grid_.places; k += lanes) {
+            Eight re{}, im{};
+            for (const Part& part : parts_) {
+                const Eight b_re = load(part.re + k), b_im = load(part.im + k);
+                re += part.by_re * b_re - part.by_im * b_im;
+                im += part.by_re * b_im + part.by_im * b_re;
+            }
+            re.store(to_re + k);
+            im.store(to_im + k);
         }
+        most_.push_back(rows_.strongest(i, grid_.places));
+        largest_ = std::max(largest_, most_[i] * most_[i]);
     }
-};
 
-/// Scaled incident coefficients of one target, orders -order .. order from `row` on, on the grid's even points, then
-/// its odd ones: `a` for the transmitter, in `g` for the receiver (-1)^n a_-n, as reciprocity asks.
-void illuminate(const Table& table, const Scatterer& target, const Grid& grid, double separation, int row, Rows& a,
-                Rows& g) {
-    const double first = grid.start - target.x;
-    const Reading at_a(first - 0.5 * separation, grid.spacing), at_g(first + 0.5 * separation, grid.spacing);
-    const int ahead = at_g.left - at_a.left, count = grid.half + taps + 1 + ahead;
-    std::vector<float> re(static_cast<std::size_t>(count)), im(re.size());
-    const auto read = [&](const Reading& reading, int from, float sign, int to_row, Rows& out) {
-        for (int p = 0; p < 2; ++p) {
-            const std::size_t to = out.at(to_row) + static_cast<std::size_t>(p * grid.half);
-            const int at = from + reading.skip[p];
-            interpolate(reading.weight[p], sign, re.data() + at, im.data() + at, out.re.data() + to, out.im.data() + to,
-                        grid.half);
-        }
-    };
-    Cx turned{1.0};
-    float sign = 1.0F;
-    for (int n = 0; n <= target.order(); ++n, turned = -turn(turned), sign = -sign) {
-        const Cx scale = Cx{target.root[static_cast<std::size_t>(n)]} * turned;
-        for (const int side : {1, -1}) {
-            if (n == 0 && side < 0) continue;
-            table.lay_out(n, side, scale, at_a.left + 1 - taps / 2, count, re.data(), im.data());
-            read(at_a, 0, 1.0F, row + target.order() + side * n, a);
-            read(at_g, ahead, sign, row + target.order() - side * n, g);
-        }
-    }
-}
-
-/// sum_i g_i sum_j T_ij a_j, over the parts of T that count, by what stands on either side of them at its strongest.
-std::vector<Complex> join(const Rows& a, const Rows& g, const std::vector<Complex>& joint, double share) {
-    const std::vector<double> a_most = a.strongest(), g_most = g.strongest();
-    const std::size_t rows = a_most.size();
-    std::vector<double> size(joint.size());
-    double most = 0.0;
-    for (std::size_t i = 0; i < joint.size(); ++i)
-        most = std::max(most, size[i] = std::sqrt(std::norm(joint[i])) * g_most[i / rows] * a_most[i % rows]);
     struct Part {
-        std::size_t from;
-        float re, im;
+        const float *re, *im;
+        float by_re, by_im;
     };
-    std::vector<std::vector<Part>> parts(rows);
-    for (std::size_t i = 0; i < joint.size(); ++i) {
-        if (size[i] > 0.1 * share * most)
-            parts[i / rows].push_back({a.at(static_cast<int>(i % rows)), static_cast<float>(joint[i].real()),
-                                       static_cast<float>(joint[i].imag())});
+    const Grid& grid_;
+    const std::vector<Cx>& G_;
+    double share_, largest_ = 0.0;
+    int size_ = 0;
+    Rows rows_, t_;
+    std::vector<double> most_;
+    std::vector<Part> parts_;
+};
+
+/// sum += a * b, complex.
+void add_product(const float* a_re, const float* a_im, const float* b_re, const float* b_im, float* sum_re,
+                 float* sum_im, int width) {
+    for (int i = 0; i < width; i += lanes) {
+        const Eight ar = load(a_re + i), ai = load(a_im + i), br = load(b_re + i), bi = load(b_im + i);
+        (load(sum_re + i) + (ar * br - ai * bi)).store(sum_re + i);
+        (load(sum_im + i) + (ar * bi + ai * br)).store(sum_im + i);
     }
-    std::vector<Complex> out(static_cast<std::size_t>(a.width));
-    for (int from = 0; from < a.width; from += lane) {
-        Four sum_re[2] = {}, sum_im[2] = {};
-        for (std::size_t i = 0; i < rows; ++i) {
-            if (parts[i].empty()) continue;
-            Four re[2] = {}, im[2] = {};
-            for (const Part& part : parts[i]) {
-                const float* const at_re = a.re.data() + part.from + from;
-                const float* const at_im = a.im.data() + part.from + from;
-                for (int p = 0; p < 2; ++p) {
-                    const Four a_re = load(at_re + 4 * p), a_im = load(at_im + 4 * p);
-                    re[p] += part.re * a_re - part.im * a_im;
-                    im[p] += part.re * a_im + part.im * a_re;
-                }
-            }
-            for (int p = 0; p < 2; ++p) {
-                const std::size_t at = g.at(static_cast<int>(i)) + static_cast<std::size_t>(from + 4 * p);
-                const Four g_re = load(g.re.data() + at), g_im = load(g.im.data() + at);
-                sum_re[p] += g_re * re[p] - g_im * im[p];
-                sum_im[p] += g_re * im[p] + g_im * re[p];
-            }
-        }
-        for (int p = 0; p < lane; ++p)
-            out[static_cast<std::size_t>(from + p)] = {static_cast<double>(sum_re[p / 4][p % 4]),
-                                                       static_cast<double>(sum_im[p / 4][p % 4])};
-    }
-    return out;
 }
 
 }  // namespace
 
-Grid grid_for(const Track& line, double widest) {
-    Grid grid;
-    grid.spacing = pi / (2.0 * widest * oversampling);
-    grid.start = line.first - (taps / 2) * grid.spacing;
-    const double span = line.step * (line.traces - 1);
-    grid.half = in_lanes((static_cast<int>(std::ceil(span / grid.spacing)) + taps + 2) / 2);
-    return grid;
+Grid::Grid(const Track& track, double spacing_, int ahead_) : spacing(spacing_), ahead(ahead_) {
+    start = track.first - (taps / 2) * spacing;
+    const int midpoints = static_cast<int>(std::ceil(track.step * (track.traces - 1) / spacing)) + taps + 2;
+    half = in_lanes((midpoints + 1) / 2);
+    places = in_lanes(half + std::max(3, ahead / 2 + 2) + taps);
+    middle = static_cast<int>(std::ceil((track.farthest + 0.5 * track.separation) / (2.0 * spacing))) + taps + 3;
+    traces.reserve(static_cast<std::size_t>(track.traces));
+    for (int i = 0; i < track.traces; ++i) {
+        const Between at((track.first + i * track.step - start) / spacing);
+        // Every second midpoint is in the same half: weights of the first one's half come first.
+        Trace trace{at.skip + 1 - taps / 2, {}};
+        for (int t = 0; t < taps; ++t) trace.weight[(t & 1) * taps / 2 + t / 2] = at.weight[t];
+        traces.push_back(trace);
+    }
+    const double dk = 2.0 * pi / track.period, widest = pi / (2.0 * oversampling * spacing);
+    wave = waves(2.0 * spacing, middle + 1, dk, static_cast<int>(widest / dk) + 2);
 }
 
-std::vector<Complex> echo_on(const Grid& grid, const Track& line, const std::vector<Scatterer>& targets,
-                             const Host& host, const Spectra& spectra, int count, const std::vector<Complex>& joint,
-                             double share) {
-    int rows = 0;
-    double farthest = 0.0, nearest = targets[0].above;
-    for (const Scatterer& target : targets) {
-        rows += target.size();
-        const double left = grid.start - target.x, right = left + 2 * grid.half * grid.spacing;
-        farthest = std::max({farthest, -left, right});
-        nearest = std::min(nearest, target.above);
-    }
-    farthest += 0.5 * line.separation;
-    // What is left of the wave on its way down is taken out, that floats keep their range in lossy ground.
-    double loudness = std::sqrt(norm(spectra.down[0] * travel(spectra.kz[0], nearest)));
-    if (!(loudness > 0.0)) loudness = 1.0;
-    const int distances = static_cast<int>(farthest / (2.0 * grid.spacing)) + taps / 2 + 2;
-    const Rows wave = waves(2.0 * grid.spacing, distances, spectra.spacing, count);
-    std::vector<Table> tables;
-    Rows a(rows, 2 * grid.half), g(rows, 2 * grid.half);
-    int row = 0;
-    for (const Scatterer& target : targets) {
-        const auto level = [&](const auto& other) { return other.above == target.above; };
-        auto table = std::find_if(tables.begin(), tables.end(), level);
-        if (table == tables.end()) {
-            int order = 0;
-            for (const Scatterer& other : targets)
-                if (level(other)) order = std::max(order, other.order());
-            tables.emplace_back(target, order, host, spectra, count, loudness, wave);
-            table = tables.end() - 1;
-        }
-        illuminate(*table, target, grid, line.separation, row, a, g);
-        row += target.size();
-    }
-    std::vector<Complex> out = join(a, g, joint, share);
-    for (Complex& value : out) value *= loudness * loudness;
-    return out;
+double Grid::first_place(const Track& track) const {
+    return start - 0.5 * track.separation - (taps / 2 - 1) * 2.0 * spacing;
 }
 
-void onto_traces(const Grid& grid, const Track& line, const std::vector<Complex>& values, Complex factor, Complex* out,
-                 std::size_t stride) {
-    static const Weights table;
-    for (int trace = 0; trace < line.traces; ++trace) {
-        const double at = (line.first + trace * line.step - grid.start) / grid.spacing;
-        const int left = static_cast<int>(at);
-        const double entry = (at - left) * Weights::count;
-        const int low = std::min(static_cast<int>(entry), Weights::count - 1);
-        const double part = entry - low;
-        const std::array<double, taps>&one = table.at[low], &other = table.at[low + 1];
-        double re = 0.0, im = 0.0;
-        for (int t = 0; t < taps; ++t) {
-            const int i = left + 1 - taps / 2 + t;
-            const Complex& value = values[static_cast<std::size_t>((i >> 1) + (i & 1) * grid.half)];
-            const double weight = one[t] + part * (other[t] - one[t]);
-            re += weight * value.real();
-            im += weight * value.imag();
+const Grid& Grids::for_waves(double widest) {
+    const double coarsest = pi / (2.0 * widest * oversampling);
+    int ahead = static_cast<int>(std::ceil(track_.separation / coarsest)), step = 0;
+    double spacing = track_.separation / std::max(ahead, 1);
+    if (ahead < enough_ahead) {
+        ahead = track_.separation > 0.0 ? -1 : 0;
+        step = static_cast<int>(std::ceil(-octave_steps * std::log2(coarsest)));
+        spacing = std::exp2(-step / octave_steps);
+    }
+    return grids_.try_emplace({ahead, step}, track_, spacing, ahead).first->second;
+}
+
+Table::Table(const Level& level, int order, const Grid& grid, const Host& host, const Spectra& spectra, int count,
+             double loudness)
+    : width(2 * grid.middle + 1 + lanes) {
+    const int columns = (2 * order + 2 + 3) / 4 * 4;
+    std::vector<float> sums(static_cast<std::size_t>(count) * columns), differences(sums.size());
+    const Cx inverse_k = Cx{1.0} / spectra.k;
+    for (int k = 0; k < count; ++k) {
+        const std::size_t at = static_cast<std::size_t>(k);
+        const double kx = k * spectra.spacing;
+        const Cx kz = spectra.kz[at], sent = (spectra.spacing / loudness * (k == 0 ? 0.5 : 1.0)) * spectra.down[at];
+        const Cx down = sent * level.to_top[at];
+        const Cx up = host.endless() ? Cx{} : sent * spectra.below[at] * spectra.pass[at] * level.to_bottom[at];
+        const Cx E = (Cx{kx} + turn(kz)) * inverse_k, E_inverse = (Cx{kx} - turn(kz)) * inverse_k;
+        Cx P{1.0}, Q{1.0};
+        double sign = 1.0;
+        for (int n = 0; n <= order; ++n, P = P * E, Q = Q * E_inverse, sign = -sign) {
+            const Cx alpha = down * Q + up * P, beta = sign * (down * P + up * Q), sum = alpha + beta,
+                     difference = beta - alpha;  // j S: j j = -1
+            const std::size_t to = at * columns + 2 * static_cast<std::size_t>(n);
+            sums[to] = static_cast<float>(sum.re);
+            sums[to + 1] = static_cast<float>(sum.im);
+            differences[to] = static_cast<float>(difference.re);
+            differences[to + 1] = static_cast<float>(difference.im);
         }
-        out[static_cast<std::size_t>(trace) * stride] += factor * Complex{re, im};
+    }
+    // Lanes past the last place read on into the next row; nobody looks at what they make of it.
+    cosines.resize(static_cast<std::size_t>(columns) * width + 4 * lanes);
+    sines.resize(cosines.size());
+    sum_waves(grid.wave, false, sums, count, columns, grid.middle, width, cosines);
+    sum_waves(grid.wave, true, differences, count, columns, grid.middle, width, sines);
+}
+
+void add_echo(const Grid& grid, const Track& track, const std::vector<Scatterer>& targets,
+              const std::vector<const Table*>& tables, const std::vector<Cx>& G, double share, Cx factor, Complex* out,
+              std::size_t stride) {
+    const Illumination lit(grid, track, targets, tables, G, share);
+    const int filled = grid.places - taps;  // places of either kind that can be filled in between
+    static const Grid::Weights midway = weights(0.5);
+    const double on = 0.5 * track.separation / grid.spacing;
+    const Between far_even(on), far_odd(on + 0.5);
+    Rows odd(1, grid.places), far(2, grid.places), sum(2, grid.half);
+    for (int row = 0; row < lit.size(); ++row) {
+        if (!lit.matters(row)) continue;
+        const float* const re = lit.rows().re.data() + lit.rows().at(row);
+        const float* const im = lit.rows().im.data() + lit.rows().at(row);
+        interpolate(midway, re, odd.re.data(), filled);
+        interpolate(midway, im, odd.im.data(), filled);
+        const float* const near_re[2] = {re + taps / 2 - 1, odd.re.data()};
+        const float* const near_im[2] = {im + taps / 2 - 1, odd.im.data()};
+        for (int p = 0; p < 2; ++p) {
+            const float *far_re, *far_im;
+            if (grid.ahead >= 0) {
+                const int place = p + grid.ahead;
+                far_re = near_re[place & 1] + place / 2;
+                far_im = near_im[place & 1] + place / 2;
+            } else {
+                const Between& at = p == 0 ? far_even : far_odd;
+                interpolate(at.weight, re + at.skip, far.re.data() + far.at(p), grid.half);
+                interpolate(at.weight, im + at.skip, far.im.data() + far.at(p), grid.half);
+                far_re = far.re.data() + far.at(p);
+                far_im = far.im.data() + far.at(p);
+            }
+            add_product(near_re[p], near_im[p], far_re, far_im, sum.re.data() + sum.at(p), sum.im.data() + sum.at(p),
+                        grid.half);
+        }
+    }
+    for (std::size_t i = 0; i < grid.traces.size(); ++i) {
+        const Grid::Trace& trace = grid.traces[i];
+        const std::size_t first = sum.at(trace.left & 1) + static_cast<std::size_t>(trace.left / 2),
+                          second = sum.at((trace.left + 1) & 1) + static_cast<std::size_t>((trace.left + 1) / 2);
+        const Eight a = load(trace.weight.data()), b = load(trace.weight.data() + lanes);
+        const float re = (a * load(sum.re.data() + first) + b * load(sum.re.data() + second)).sum(),
+                    im = (a * load(sum.im.data() + first) + b * load(sum.im.data() + second)).sum();
+        out[i * stride] += Complex(factor * Cx{static_cast<double>(re), static_cast<double>(im)});
     }
 }
 

@@ -16,22 +16,36 @@ struct Host {
     bool endless() const { return !(thickness > 0.0); }
 };
 
+/// One plane wave through all media, air first. Recursive (Airy) forms, exact; only decaying exponentials occur.
+class PlaneWaves {
+  public:
+    PlaneWaves(const Media& media, const Stack& ground, Polarisation polarisation);
+    /// Turns to a horizontal wave number, 1/m.
+    void turn_to(double kx);
+
+    std::vector<Cx> kz;    ///< vertical wave number, Im <= 0
+    std::vector<Cx> r;     ///< reflection of medium i on the next, by itself
+    std::vector<Cx> once;  ///< once through medium i; the first and the last have no end
+    std::vector<Cx> D;     ///< reflection looking down at the bottom of medium i, all below it included
+    std::vector<Cx> x;     ///< the same seen from the top of medium i
+
+  private:
+    const Stack& ground_;
+    std::vector<Cx> k2_, weight_, g_;  // g: kz (along) or kz / permittivity (across), whose ratios make r
+};
+
 /// Values at kx = i * spacing, i = 0 .. size - 1; all are even in kx.
 struct Spectra {
-    double spacing = 0.0;     ///< 1/m
-    Cx k;                     ///< wave number of the host layer
-    std::vector<Cx> kz;       ///< vertical wave number in the host layer, Im <= 0
-    std::vector<Cx> down;     ///< down-going wave at the host's top, per unit source and dkx
-    std::vector<Cx> above;    ///< reflection looking up, at the host's top
-    std::vector<Cx> below;    ///< reflection looking down, at the host's bottom; 0 when endless
-    std::vector<Cx> pass;     ///< once through the host layer; 0 when endless
-    std::vector<Cx> surface;  ///< reflection of the air on the uppermost layer alone
-    std::vector<Cx> echo;     ///< what the deeper boundaries add to it
-    std::vector<Cx> kz_air;
+    double spacing = 0.0;   ///< 1/m
+    Cx k;                   ///< wave number of the host layer
+    std::vector<Cx> kz;     ///< vertical wave number in the host layer, Im <= 0
+    std::vector<Cx> down;   ///< down-going wave at the host's top, per unit source and dkx
+    std::vector<Cx> above;  ///< reflection looking up, at the host's top
+    std::vector<Cx> below;  ///< reflection looking down, at the host's bottom; 0 when endless
+    std::vector<Cx> pass;   ///< once through the host layer; 0 when endless
     std::size_t size() const { return kz.size(); }
 };
 
-/// Recursive (Airy) forms, exact for plane waves; only decaying exponentials occur.
 Spectra spectra_of(const Media& media, const Stack& ground, const Host& host, double height, Polarisation polarisation,
                    double spacing, int count);
 

@@ -67,8 +67,11 @@ TEST_CASE("A metal cylinder has the published widths in both polarisations") {
         CHECK(six_digits(along.width(0), row.along_forward));
         CHECK(six_digits(across.width(0), row.across_forward));
     }
-    CHECK(six_digits(Widths(1, 1.0, true, Polarisation::along).scattered(), 2.95656));
-    CHECK(six_digits(Widths(10, 1.0, true, Polarisation::across).scattered(), 1.79662));
+    const double scattered[][3] = {{0.1, 5.94470, 0.00369160}, {1, 2.95656, 1.00019}, {10, 2.21332, 1.79662}};
+    for (const auto& row : scattered) {
+        CHECK(six_digits(Widths(row[0], 1.0, true, Polarisation::along).scattered(), row[1]));
+        CHECK(six_digits(Widths(row[0], 1.0, true, Polarisation::across).scattered(), row[2]));
+    }
 }
 
 TEST_CASE("A filled cylinder has the widths of its series in both polarisations") {
@@ -112,6 +115,39 @@ TEST_CASE("A filled cylinder has the widths of its series in both polarisations"
     CHECK(six_digits(across.lost(), 1.52617));
 }
 
+TEST_CASE("Thin cylinders scatter as the closed forms without a series say, bare, filled and walled") {
+    // Metal: Ruck et al. 1970, equations 4.1-19 and 4.1-22, as widths over the radius.
+    constexpr double x = 0.002;
+    const Widths bar(x, 1.0, true, Polarisation::along), turned(x, 1.0, true, Polarisation::across);
+    const double log = std::log(0.8905 * x);
+    CHECK(std::fabs(bar.width(pi) * 2.0 * pi / x / (pi * pi / (x * (log * log + pi * pi / 4.0))) - 1.0) < 1e-4);
+    CHECK(std::fabs(turned.width(pi) * 2.0 * pi / x / (pi * pi * x * x * x * 2.25) - 1.0) < 1e-4);
+    CHECK(std::fabs(turned.width(0) * 2.0 * pi / x / (pi * pi * x * x * x * 0.25) - 1.0) < 1e-4);
+    // Filled and walled: along the field what counts is the sum of area times contrast; across it the polarisability of
+    // the two rings in a static field (textbook; derived from continuity of potential and displacement).
+    const Inner host{false, 1.0, 1.0};
+    const auto matter = [](Complex eps) { return Inner{false, std::sqrt(eps), eps}; };
+    const double share = 0.64;  // of the area inside the wall
+    for (const Complex inside : {Complex{4.0}, Complex{0.2}, Complex{9.0, -3.0}}) {
+        for (const Complex wall : {Complex{0.3}, Complex{2.0, -0.5}}) {
+            const Cylinder c{x, matter(inside), x * (1.0 - std::sqrt(share)), matter(wall)};
+            const Complex mean = share * inside + (1.0 - share) * wall;
+            const Complex along = -i1 * pi / 4.0 * x * x * (mean - 1.0);
+            CHECK(std::abs(scatter(c, host, 2, Polarisation::along)[0] / along - 1.0) < 1e-4);
+            const Complex whole = wall * (inside * (1.0 + share) + wall * (1.0 - share)) /
+                                  (inside * (1.0 - share) + wall * (1.0 + share));
+            const Complex across = -i1 * pi / 4.0 * x * x * (whole - 1.0) / (whole + 1.0);
+            CHECK(std::abs(scatter(c, host, 2, Polarisation::across)[1] / across - 1.0) < 1e-4);
+        }
+    }
+    const Cylinder sleeved{x, {true, {}, {}}, x * (1.0 - std::sqrt(share)), matter(0.3)};
+    const double whole = 0.3 * (1.0 + share) / (1.0 - share);
+    const Complex across = -i1 * pi / 4.0 * x * x * ((whole - 1.0) / (whole + 1.0));
+    // A metal core also keeps the magnetic field out, which is of the same order but of another n.
+    CHECK(std::abs(scatter(sleeved, host, 2, Polarisation::across)[1] / across - 1.0) < 1e-4);
+    CHECK(std::abs(scatter(sleeved, host, 2, Polarisation::across)[0] / (-i1 * pi / 4.0 * x * x * share) + 1.0) < 1e-3);
+}
+
 TEST_CASE("A lossless target gives back all it takes, order by order, walled or not") {
     const Inner host{false, 1.0, 1.0};
     for (const Polarisation polarisation : {Polarisation::along, Polarisation::across}) {
@@ -141,41 +177,52 @@ TEST_CASE("A wall of the filling's own stuff is no wall, one of the host's own s
 }
 
 TEST_CASE("Two coupled lossless targets scatter just what they take out of the wave") {
-    // Optical theorem in two dimensions, for the joint answer without boundaries: with the far field
-    // f = sum j^n b_n exp(jn phi) exp(j k r_q . phi),  mean |f|^2 over all angles = -Re f(forward).
+    // Optical theorem in two dimensions, for the joint answer without boundaries: with f the far field of a plane wave
+    // of unit strength, mean |f|^2 over all angles = -Re f(forward).
     Spectra none;
     none.k = Cx{1.0};
+    const Host host{1, 0.0, 0.0};
+    const Directions nowhere(none, 0);
     for (const Polarisation polarisation : {Polarisation::along, Polarisation::across}) {
         std::vector<Scatterer> targets;
+        std::vector<const Paths*> own;
+        const Level levels[2] = {level_at(5.0, 0.0, host, none, 0), level_at(3.96, 0.0, host, none, 0)};
+        const Paths no_images(levels[0], levels[0], 0.0, 28, host, none, nowhere, 0);
         for (const double x : {0.0, 2.6}) {
             const Inner inside{false, std::sqrt(4.0 + x), 4.0 + x};
-            Scatterer t{
-                x, 5.0 - 0.4 * x, 0.0, scatter({1.1, inside, 0.0, {}}, {false, 1.0, 1.0}, 14, polarisation), {}};
-            for (const Complex& s : t.s) t.root.push_back(std::sqrt(s));
+            Scatterer t{x, &levels[targets.size()], {}};
+            for (const Complex& s : scatter({1.1, inside, 0.0, {}}, {false, 1.0, 1.0}, 14, polarisation))
+                t.strength.push_back(std::sqrt(t.strength.empty() ? s : 2.0 * s));
             targets.push_back(t);
+            own.push_back(&no_images);
         }
-        const std::vector<Complex> joint = joint_answer(targets, {1, 0.0, 0.0}, none, 0);
-        const int size = targets[0].size(), all = 2 * size;
-        const double way = 0.7;  // direction of the incident wave
-        std::vector<Complex> a(static_cast<std::size_t>(all)), b(a.size());
-        for (int i = 0; i < all; ++i) {
-            const Scatterer& t = targets[static_cast<std::size_t>(i / size)];
-            const int n = i % size - t.order();
-            const Complex arrival = std::exp(-i1 * (t.x * std::cos(way) + t.above * std::sin(way)));
-            a[i] = t.root[std::abs(n)] * std::exp(-i1 * (n * (pi / 2 + way))) * arrival;
-        }
-        for (int i = 0; i < all; ++i) {
-            const Scatterer& t = targets[static_cast<std::size_t>(i / size)];
-            for (int k = 0; k < all; ++k) b[i] += joint[static_cast<std::size_t>(i * all + k)] * a[k];
-            b[i] *= t.root[std::abs(i % size - t.order())];
-        }
-        const auto far = [&](double angle) {
-            Complex sum;
-            for (int i = 0; i < all; ++i) {
-                const Scatterer& t = targets[static_cast<std::size_t>(i / size)];
-                const int n = i % size - t.order();
-                sum += b[i] * std::exp(i1 * (n * (pi / 2 + angle) + t.x * std::cos(angle) + t.above * std::sin(angle)));
+        const std::vector<Cx> G = couple(targets, own, host, none, nowhere, 0);
+        const std::size_t rows = static_cast<std::size_t>(targets[0].rows() + targets[1].rows());
+        // G^-1 of the rows of a plane wave that travels at an angle from the line.
+        const auto lit = [&](double angle) {
+            std::vector<Complex> u;
+            for (const Scatterer& t : targets) {
+                const Complex arrival = std::exp(-i1 * (t.x * std::cos(angle) + t.level->above * std::sin(angle)));
+                for (int n = 0; n <= t.order(); ++n) {
+                    const auto a = [&](int m) { return arrival * std::exp(-i1 * (m * (pi / 2 + angle))); };
+                    const Complex half = 0.5 * Complex(t.strength[static_cast<std::size_t>(n)]) * std::pow(i1, n);
+                    u.push_back(half * (a(n) + a(-n)));
+                    if (n == 0) continue;
+                    u.push_back(i1 * half * (a(n) - a(-n)));
+                }
             }
+            for (std::size_t i = 0; i < rows; ++i) {
+                for (std::size_t k = 0; k < i; ++k) u[i] -= Complex(G[i * rows + k]) * u[k];
+                u[i] /= Complex(G[i * rows + i]);
+            }
+            return u;
+        };
+        const double way = 0.7;  // of the incident wave
+        const std::vector<Complex> sent = lit(way);
+        const auto far = [&](double angle) {  // by reciprocity: what comes from there, going the other way
+            const std::vector<Complex> heard = lit(angle + pi);
+            Complex sum;
+            for (std::size_t i = 0; i < rows; ++i) sum += heard[i] * sent[i];
             return sum;
         };
         double mean = 0.0;
