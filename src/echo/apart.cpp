@@ -160,7 +160,7 @@ double read_down_to(const Scene& scene) {
 /// Root mean square of the noise in what is read: in the record, or in the focused image before that is made 1.
 double noise_of(const Scene& scene, const Section& section, Reading reading) {
     if (reading == Reading::raw) return rms(section.noise);
-    const Image noise = focused(scene, section.noise, read_down_to(scene));
+    const Image noise = focused(scene, section.noise, {0.0, read_down_to(scene)});
     return noise.issue == Issue::none ? rms(noise.values) * noise.peak : 0.0;
 }
 
@@ -173,7 +173,7 @@ Dip dip_with(const Scene& scene, const Section& section, Reading reading, double
                         section.start,  section.dt,      &section.targets};
         return read(c, a.x, b.x, time_to(scene, top_a), time_to(scene, top_b), width, sigma);
     }
-    const Image image = focused(scene, section.targets, read_down_to(scene));
+    const Image image = focused(scene, section.targets, {0.0, read_down_to(scene)});
     if (image.issue != Issue::none) return {};
     const Columns c{image.traces, image.rows, image.first, image.step, 0.0, image.spacing, &image.values};
     const double v = effective_speed(scene.ground, a.depth, scene.pulse.centre_frequency).value;
