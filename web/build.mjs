@@ -124,7 +124,7 @@ files.set('sw.js', Buffer.from(esbuild(join(web, 'sw.js'), '--minify-whitespace'
 const inline = script.replace(/<\/script/gi, '<\\/script');
 const packed = gzipSync(wasm, { level: 9 }).toString('base64');
 const single = page({
-    policy: policy(integrity(inline), integrity(style), `'none'`),
+    policy: policy(integrity(inline), integrity(style), 'blob:'),
     head: `<style>${style}</style>\n<link rel="icon" href="data:image/svg+xml;base64,${Buffer.from(iconSource).toString('base64')}">`,
     scripts: `<script type="text/plain" id="program-bytes">${packed}</script>\n`
         + `<script type="text/plain" id="licences">${licences().replace(/<\/script/gi, '')}</script>\n<script>${inline}</script>`,

@@ -13,6 +13,7 @@
 
 #include "app/desktop_files.hpp"
 #include "app/platform.hpp"
+#include "app/reckoner.hpp"
 #include "app/window_input.hpp"
 #include "wave/embedded.hpp"
 
@@ -46,6 +47,7 @@ class Window {
         for (GLFWcursor* cursor : cursors_)
             if (cursor) glfwDestroyCursor(cursor);
         if (window_) glfwDestroyWindow(window_);
+        reckoner_.reset();  // may take a moment: nobody looks at a window that is gone
         glfwTerminate();
     }
 
@@ -103,6 +105,7 @@ class Window {
         glfwSwapInterval(1);
         glfwSetWindowSizeLimits(window_, 240, 240, GLFW_DONT_CARE, GLFW_DONT_CARE);
         program_ = std::make_unique<Program>(font());
+        reckoner_ = std::make_unique<Reckoner>(glfwPostEmptyEvent);
         drawing_ = ImGui_ImplOpenGL3_Init("#version 150");
         if (!drawing_) return "The window cannot be opened: it needs OpenGL 3.2 or later.";
         cursors_ = {glfwCreateStandardCursor(GLFW_ARROW_CURSOR), glfwCreateStandardCursor(GLFW_IBEAM_CURSOR),
@@ -190,17 +193,24 @@ class Window {
         else
             glfwWaitEvents();
         if (const auto chosen = dialog_.finished()) take(*chosen);
+        if (const auto answer = reckoner_->answer()) {
+            program_->reckoned(*answer);
+            stirred_ = true;
+        }
         if (stirred_ || std::isfinite(due)) frame();
     }
 
     /// s, never going back. While a script plays, time is as long as its frames: every run is then the same.
     double now() const { return playing_ ? ahead_ : glfwGetTime() + ahead_; }
 
-    /// Frames until nothing moves, without waiting for what is due later; at most 300, for motion that never rests.
+    /// Frames until nothing moves (for a script: and nothing is computed), without waiting for what is due later; at
+    /// most 300, for motion that never rests.
     void settle() {
         for (int i = 0; i < 300; ++i) {
             glfwPollEvents();
             frame();
+            if (playing_) reckoner_->finish();
+            if (const auto answer = reckoner_->answer()) program_->reckoned(*answer);
             const double wake = program_->wake_after();
             if (!std::isfinite(wake)) return;
             ahead_ += std::max(wake, 1.0 / 60);
@@ -290,6 +300,9 @@ class Window {
             case Request::Kind::copy:
                 glfwSetClipboardString(window_, request.text.c_str());
                 break;
+            case Request::Kind::reckon:
+                reckoner_->order(request.text);
+                break;
             case Request::Kind::edit_text:  // asked for by fingers only; the window has a keyboard
             case Request::Kind::announce:
                 break;
@@ -335,6 +348,7 @@ class Window {
     Options options_;
     GLFWwindow* window_ = nullptr;
     std::unique_ptr<Program> program_;
+    std::unique_ptr<Reckoner> reckoner_;
     bool drawing_ = false, stirred_ = true, complained_ = false, playing_ = false;
     double ahead_ = 0.0;          ///< s that the program's clock is before GLFW's
     int width_ = 0, height_ = 0;  ///< physical pixels, as the program knows them

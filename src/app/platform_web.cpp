@@ -1,5 +1,6 @@
 /// The browser page's side of the program: a flat set of functions that web/shell calls. The shell owns the clock, the
-/// events and the storage; here is only the translation, and the drawing by WebGL 2.
+/// events and the storage; here is only the translation, and the drawing by WebGL 2. A worker beside the page runs the
+/// same code and calls nothing of it but gg_reckon().
 /// Texts come in as pointer and length, UTF-8, and go out through `text_out`: the pointer is returned, gg_length()
 /// gives the length, and both stand until the next call.
 #include <GLES3/gl3.h>
@@ -14,6 +15,7 @@
 #include <string>
 
 #include "app/platform.hpp"
+#include "paper/pair_desk.hpp"
 #include "ui/program.hpp"
 #include "wave/embedded.hpp"
 
@@ -27,16 +29,17 @@ struct Page {
     gg::Program program{gg::platform::font()};
     EMSCRIPTEN_WEBGL_CONTEXT_HANDLE context = 0;
     bool drawing = false;  ///< a WebGL context is there and not lost
-    std::string text_out;
-
-    const char* give(std::string text) {
-        text_out = std::move(text);
-        return text_out.c_str();
-    }
 };
 
-/// The only global: the C functions below have no other way to their state.
+/// The only globals: the C functions below have no other way to their state.
 std::unique_ptr<Page> page;
+std::unique_ptr<gg::PairDesk> desk;
+std::string text_out;
+
+const char* give(std::string text) {
+    text_out = std::move(text);
+    return text_out.c_str();
+}
 
 const char* word_for(gg::Request::Kind kind) {
     using Kind = gg::Request::Kind;
@@ -53,6 +56,8 @@ const char* word_for(gg::Request::Kind kind) {
             return "copy";
         case Kind::announce:
             return "announce";
+        case Kind::reckon:
+            return "reckon";
     }
     return "";
 }
@@ -158,6 +163,9 @@ EMSCRIPTEN_KEEPALIVE void gg_opened(const char* name, int name_length, const cha
 EMSCRIPTEN_KEEPALIVE void gg_restore(const char* name, int name_length, const char* text, int length) {
     page->program.restore({name, static_cast<std::size_t>(name_length)}, {text, static_cast<std::size_t>(length)});
 }
+EMSCRIPTEN_KEEPALIVE void gg_reckoned(const char* answer, int length) {
+    page->program.reckoned({answer, static_cast<std::size_t>(length)});
+}
 EMSCRIPTEN_KEEPALIVE void gg_press(const char* id, int length) {
     page->program.press({id, static_cast<std::size_t>(length)});
 }
@@ -184,7 +192,7 @@ EMSCRIPTEN_KEEPALIVE double gg_frame(double now, int show) {
 /// What the program asks of the page: a JSON list, or an empty text.
 EMSCRIPTEN_KEEPALIVE const char* gg_requests() {
     const auto requests = page->program.take_requests();
-    if (requests.empty()) return page->give({});
+    if (requests.empty()) return give({});
     nlohmann::json list = nlohmann::json::array();
     for (const auto& r : requests)
         list.push_back({{"kind", word_for(r.kind)},
@@ -194,11 +202,16 @@ EMSCRIPTEN_KEEPALIVE const char* gg_requests() {
                         {"y", r.y},
                         {"width", r.width},
                         {"height", r.height}});
-    return page->give(list.dump(-1, ' ', false, nlohmann::json::error_handler_t::replace));
+    return give(list.dump(-1, ' ', false, nlohmann::json::error_handler_t::replace));
 }
-EMSCRIPTEN_KEEPALIVE const char* gg_controls() { return page->give(page->program.controls_json()); }
-EMSCRIPTEN_KEEPALIVE const char* gg_answers() { return page->give(page->program.answers_json()); }
-EMSCRIPTEN_KEEPALIVE const char* gg_plan() { return page->give(page->program.plan_json()); }
-EMSCRIPTEN_KEEPALIVE int gg_length() { return static_cast<int>(page->text_out.size()); }
+EMSCRIPTEN_KEEPALIVE const char* gg_controls() { return give(page->program.controls_json()); }
+EMSCRIPTEN_KEEPALIVE const char* gg_answers() { return give(page->program.answers_json()); }
+EMSCRIPTEN_KEEPALIVE const char* gg_plan() { return give(page->program.plan_json()); }
+/// The bytes that answer an order of the program's; may take seconds.
+EMSCRIPTEN_KEEPALIVE const char* gg_reckon(const char* order, int length) {
+    if (!desk) desk = std::make_unique<gg::PairDesk>();
+    return give(desk->answer({order, static_cast<std::size_t>(length)}));
+}
+EMSCRIPTEN_KEEPALIVE int gg_length() { return static_cast<int>(text_out.size()); }
 
 }  // extern "C"

@@ -1,6 +1,8 @@
 # The desktop window and the command line: one program, `groundgrain`.
-add_library(gg_app STATIC ${CMAKE_SOURCE_DIR}/src/app/words.cpp ${CMAKE_SOURCE_DIR}/src/app/command_line.cpp)
-target_link_libraries(gg_app PUBLIC gg_paper)
+find_package(Threads REQUIRED)
+add_library(gg_app STATIC ${CMAKE_SOURCE_DIR}/src/app/words.cpp ${CMAKE_SOURCE_DIR}/src/app/command_line.cpp
+  ${CMAKE_SOURCE_DIR}/src/app/reckoner.cpp)
+target_link_libraries(gg_app PUBLIC gg_paper Threads::Threads)
 target_compile_definitions(gg_app PRIVATE GG_VERSION="${PROJECT_VERSION}")
 if(NOT TARGET gg_ui)
   return()

@@ -17,7 +17,7 @@ endif()
 add_executable(groundgrain ${CMAKE_SOURCE_DIR}/src/app/platform_web.cpp)
 target_link_libraries(groundgrain PRIVATE gg_ui gg_imgui_gl)
 target_compile_options(groundgrain PRIVATE -Oz)
-target_link_options(groundgrain PRIVATE -Oz --no-entry -sMODULARIZE=1 -sEXPORT_NAME=createProgram -sENVIRONMENT=web
+target_link_options(groundgrain PRIVATE -Oz --no-entry -sMODULARIZE=1 -sEXPORT_NAME=createProgram -sENVIRONMENT=web,worker
   -sFILESYSTEM=0 -sMALLOC=emmalloc -sALLOW_MEMORY_GROWTH=1 -sABORTING_MALLOC=0 -sTOTAL_STACK=1MB
   -sMIN_WEBGL_VERSION=2 -sMAX_WEBGL_VERSION=2 -sGL_SUPPORT_AUTOMATIC_ENABLE_EXTENSIONS=0
   -sGL_SUPPORT_SIMPLE_ENABLE_EXTENSIONS=0 -sGL_TRACK_ERRORS=0 -sTEXTDECODER=2 -sSUPPORT_ERRNO=0

@@ -23,10 +23,12 @@ struct FigureStyle {
     Box box;  ///< where to draw, css px
     bool dark = false;
     UnitSystem units = UnitSystem::metric;
-    double text = 14.0;                    ///< css px of normal text in the picture; small text is 0.85 of it
-    bool handles = true;                   ///< draw the drag handles (off in print)
-    std::string held;                      ///< key of the handle being dragged now, drawn strong; empty: none
-    const PairSection* section = nullptr;  ///< of this plan, for Pair; null: travel times are drawn instead
+    double text = 14.0;   ///< css px of normal text in the picture; small text is 0.85 of it
+    bool handles = true;  ///< draw the drag handles (off in print)
+    std::string held;     ///< key of the handle being dragged now, drawn strong; empty: none
+    /// For Pair: the newest section there is, perhaps of an earlier state of the plan; null: travel times are drawn.
+    const PairSection* section = nullptr;
+    bool computing = false;  ///< a newer one is on its way, and that should be said
     SectionLook look{};
 };
 

@@ -96,10 +96,12 @@ void draw_arrivals(Pair& p, const std::vector<double>& times, const std::vector<
     }
 }
 
-void draw_name(Pair& p, const Box& box, const std::string& long_name, const std::string& short_name) {
+/// What a panel shows; the first one says also that something newer is being computed.
+void draw_name(Pair& p, const Box& box, const std::string& name, const std::string& details) {
     const TextStyle words{p.colours.ink, p.small(), Across::left, Down::middle};
     const Point at{box.x + 8, box.y + p.small()};
-    if (!p.labels.put({at}, long_name, words)) p.labels.put({at}, short_name, words);
+    const std::string busy = p.style.computing && box.x == p.panel.x ? ", computing" : "";
+    if (!p.labels.put({at}, name + ", " + details + busy, words)) p.labels.put({at}, name + busy, words);
 }
 
 /// Each target where it lies in the focused picture, in whose own two scales it is no circle.
@@ -115,13 +117,19 @@ void draw_outlines(Pair& p, const SectionFrame& frame) {
     }
 }
 
+std::string focused_details(const Pair& p) {
+    if (p.seen->focused.issue != Issue::none) return "cannot be computed";
+    if (p.seen->focused.rows < 2) return "to come";
+    return p.seen->focused_before ? "before the change" : gain_words(p.style.look.gain);
+}
+
 void draw_image(Pair& p, const SectionFrame& frame) {
     p.canvas.box(frame.box, p.colours.panel, 4);
     p.canvas.push_clip(frame.box);
     draw_focused(p.canvas, frame, *p.seen, p.style.look, p.colours.dark);
     draw_outlines(p, frame);
     p.canvas.pop_clip();
-    draw_name(p, frame.box, "Focused, " + gain_words(p.style.look.gain), "Focused");
+    draw_name(p, frame.box, "Focused", focused_details(p));
 }
 
 void draw_section(Pair& p) {
@@ -137,8 +145,7 @@ void draw_section(Pair& p) {
                      {p.colours.warn, p.small(), Across::right, Down::middle});
     }
     const bool coarse = p.seen->detail == Detail::coarse;
-    draw_name(p, p.panel, "Raw, " + (coarse ? "coarse while you drag" : gain_words(p.style.look.gain)),
-              coarse ? "coarse" : "Raw");
+    draw_name(p, p.panel, "Raw", coarse ? "coarse while you drag" : gain_words(p.style.look.gain));
 }
 
 /// The inside of the middle panel: the section, or else the travel times of the two neighbours.
@@ -205,11 +212,12 @@ void draw_axis(Pair& p, Box box, double first, double last, double unit, const s
     }
 }
 
-/// Down to a round depth well below the targets, as far as the image goes.
+/// Down to a round depth well below the targets, as far as the image goes once it is there.
 double deepest_shown(const Pair& p) {
     const Image& image = p.seen->focused;
     const RoundTarget& target = p.seen->scene.targets[0];
-    return std::min(nice_ceiling(1.5 * target.depth + target.radius), image.rows * image.spacing);
+    const double deepest = nice_ceiling(1.5 * target.depth + target.radius);
+    return image.rows > 1 ? std::min(deepest, image.rows * image.spacing) : deepest;
 }
 
 void draw_axes(Pair& p) {
@@ -311,8 +319,8 @@ void lay_out(Pair& p) {
                  strip = std::clamp((p.seen ? 0.12 : 0.16) * box.height, 34.0, 90.0);
     const double line = 1.4 * p.small(), foot = !p.seen ? 0 : box.height > 420 ? 2 * line + 10 : line + 2;
     const double hill = p.seen ? 0 : std::clamp(0.18 * box.height, 30.0, 130.0), shade = p.seen ? 0 : shade_height;
-    const bool focused = p.seen && p.seen->focused.rows > 1, beside = focused && box.width >= 560;
-    p.by_depth = focused && !beside && p.style.look.focused;
+    const bool beside = p.seen && box.width >= 560;
+    p.by_depth = p.seen && !beside && p.style.look.focused;
     const double width = beside ? 0.5 * (box.width - pad) - gutter - 4 : box.width - gutter - pad;
     p.curve = {box.x + gutter, box.y + head, width, hill};
     const double top = p.seen ? box.y + head : p.curve.bottom() + shade + 8;

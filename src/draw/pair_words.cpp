@@ -23,20 +23,31 @@ static double by_travel_times(const Answer& sideways, bool settled) {
     return settled && !sideways.rules.empty() ? sideways.rules.back().value : sideways.likely.value;
 }
 
+static bool knows(const PairSection& seen, Separation::Known what) {
+    return seen.separation && seen.separation->known >= what;
+}
+
 bool PairWords::measured() const { return seen && seen->separation && seen->separation->raw.lower_peak > 0; }
 
 PairPicture::Verdict PairWords::verdict() const {
     return measured() ? verdict_of(*seen->separation) : answers.pair.verdict;
 }
 
+/// What was measured was so at the section's own gap, if that is of an earlier state of the plan.
+double PairWords::gap() const {
+    if (!measured() || seen->scene.targets.size() < 2) return plan.target.gap;
+    return std::abs(seen->scene.targets[0].x - seen->scene.targets[1].x);
+}
+
 std::string PairWords::sentence() const {
     std::string out = "Two at ";
-    out += say(plan.target.gap, Quantity::length, units);
+    out += say(gap(), Quantity::length, units);
     switch (verdict()) {
         case PairPicture::Verdict::apart:
             return out += " show as two.";
         case PairPicture::Verdict::merging:
-            return out += measured() ? " part only once focused." : " run together.";
+            return out +=
+                   measured() && knows(*seen, Separation::Known::all) ? " part only once focused." : " run together.";
         case PairPicture::Verdict::one:
             return out += " look like one.";
     }
@@ -46,12 +57,14 @@ std::string PairWords::sentence() const {
 std::string PairWords::least() const {
     const auto said = [&](double v) { return say(v, Quantity::length, units); };
     std::string out = "They part from ";
-    if (measured()) {
+    if (measured() && knows(*seen, Separation::Known::raw)) {
+        const bool both = knows(*seen, Separation::Known::all);
         const Value raw = seen->separation->least_raw, focused = seen->separation->least_focused;
+        if (!raw.ok() && !both) return "Raw, they part at no gap.";
         if (!raw.ok() && !focused.ok()) return "They part at no gap.";
         if (raw.ok()) out += said(raw.value) + " raw";
-        if (raw.ok() && focused.ok()) out += ", ";
-        if (focused.ok()) out += said(focused.value) + " focused";
+        if (raw.ok() && both && focused.ok()) out += ", ";
+        if (both && focused.ok()) out += said(focused.value) + " focused";
         return out += '.';
     }
     const Answer* sideways = answers.find("apart.sideways");

@@ -12,9 +12,10 @@ struct PairWords {
     const PairSection* seen;  ///< null: no section
     UnitSystem units;
 
-    bool measured() const;
-    /// Measured: apart where the raw section shows two, merging where only the focused one does.
+    bool measured() const;  ///< the verdict is; the least gaps may be still to come
+    /// Measured: verdict_of() of the section that is shown.
     PairPicture::Verdict verdict() const;
+    double gap() const;            ///< m, that the verdict is about
     std::string sentence() const;  ///< "Two at 0.40 m show as two."
     std::string least() const;     ///< "They part from 0.30 m raw, 0.13 m focused."
     std::string least_in_brief() const;

@@ -300,6 +300,25 @@ void add_separation(PairSection& pair, const Plan& plan) {
     read_separation(scene, section, Reading::focused, out);
 }
 
+Dip raw_dip(const Scene& scene) {
+    if (scene.targets.size() < 2) return {};
+    const RoundTarget &a = scene.targets[0], &b = scene.targets[1];
+    const double middle = 0.5 * (a.x + b.x), gap = std::abs(a.x - b.x), f = scene.pulse.centre_frequency;
+    Scene look = scene;
+    Sampling& s = look.sampling;
+    const double most = s.traces - 1.0;
+    const double from = std::clamp(std::floor((middle - gap - s.first) / s.step), 0.0, most),
+                 to = std::clamp(std::ceil((middle + gap - s.first) / s.step), from, most);
+    s.first += from * s.step;
+    s.traces = 1 + static_cast<int>(to - from);
+    const double tops = std::max(a.depth - a.radius, b.depth - b.radius), dt = s.window / s.samples;
+    const double end = 2.0 * ray_to(scene.ground, scene.height, 0.5 * scene.separation, tops, f).time - s.start +
+                       (1.0 + tail_widths) / band_of(scene.pulse).width();
+    s.samples = static_cast<int>(std::clamp(std::ceil(end / dt), 2.0, std::max(2.0, 1.0 * s.samples)));
+    s.window = s.samples * dt;
+    return dip_sideways(look, section_of(look, coarse_care), Reading::raw);
+}
+
 void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out) {
     (reading == Reading::raw ? out.raw : out.focused) = dip_sideways(scene, section, reading);
     (reading == Reading::raw ? out.least_raw : out.least_focused) = smallest_gap(scene, reading);

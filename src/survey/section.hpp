@@ -73,18 +73,25 @@ Turning turning_for(const Plan& plan);
 struct Separation {
     Dip raw, focused;                ///< at the plan's own gap
     Value least_raw, least_focused;  ///< m, smallest gap at which they are two; Issue as in smallest_gap()
+    /// How far the measuring has come: the raw dip at the plan's gap; all that is raw; all.
+    enum class Known : std::uint8_t { dip, raw, all };
+    Known known = Known::all;
 };
 Separation separation_for(const Plan& plan, Polarisation polarisation = Polarisation::along);
+/// The raw dip alone, from no more of the section than it takes: the record's own traces up to a gap from the middle,
+/// to 1 % of the strongest echo. A fifth to a half of a section's time.
+Dip raw_dip(const Scene& scene);
 /// One half of it: the dip and the least gap of one reading.
 void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out);
 
-/// Apart: in the raw section; merging: only once focused; one: in neither.
+/// Apart: in the raw section; merging: only once focused; one: in neither. As long as only the raw section is known,
+/// merging: there is a dip, too shallow to count.
 PairPicture::Verdict verdict_of(const Separation& separation);
 
 /// Puts what was measured in the place of what travel times tell: the answer "apart.sideways" becomes the least gap in
 /// the raw section (the travel-time value stands beside it as a rule), "apart.focused" is added, and the verdict of the
 /// pair picture follows. The ends of the range keep the ratio to the likely value that the travel times give.
-/// Does nothing where nothing was measured, or when done already.
+/// Does nothing where not all was measured, or when done already.
 void settle(Answers& answers, const Plan& plan, const Separation& separation);
 /// answers_for(plan), settled wherever the plan has a section: the full reckoning, for files. About ten sections' time.
 Answers settled_answers_for(const Plan& plan);
@@ -107,7 +114,8 @@ struct PairSection {
     Turning turning;
     Image focused;                         ///< no rows until add_focused()
     std::vector<double> focused_gain;      ///< of each row: that of the sample whose echo comes from there
-    std::optional<Separation> separation;  ///< none until add_separation()
+    bool focused_before = false;           ///< the focused picture is still that of an earlier state of the plan
+    std::optional<Separation> separation;  ///< none until something was measured; all of it by add_separation()
 };
 PairSection pair_section(const Plan& plan, Detail detail, Polarisation polarisation);
 /// Noise goes into the image as it is in the record; the layers' echoes do not.

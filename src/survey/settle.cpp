@@ -7,10 +7,13 @@ namespace gg {
 
 PairPicture::Verdict verdict_of(const Separation& separation) {
     using Verdict = PairPicture::Verdict;
+    if (separation.known != Separation::Known::all && !separation.raw.apart())
+        return separation.raw.depth > 0.0 ? Verdict::merging : Verdict::one;
     return separation.raw.apart() ? Verdict::apart : separation.focused.apart() ? Verdict::merging : Verdict::one;
 }
 
 void settle(Answers& answers, const Plan& plan, const Separation& separation) {
+    if (separation.known != Separation::Known::all) return;
     if (!(separation.raw.lower_peak > 0.0) || answers.find("apart.focused")) return;
     const auto at = std::find_if(answers.list.begin(), answers.list.end(),
                                  [](const Answer& a) { return a.key == "apart.sideways"; });

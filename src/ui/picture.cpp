@@ -70,13 +70,15 @@ void picture_ui(Screen& s, Grip& grip, Point pointer) {
     style.text = s.small;
     style.held = grip.field;
     style.section = session.section;
+    style.computing = session.computing;
     style.look = session.view.look;
     s.canvas().push_clip(area);
     grip.figure = view.draw(s.canvas(), session.plan, session.answers, style);
     s.canvas().pop_clip();
 
     // One item for the whole picture: which grip is meant is decided by nearness.
-    const Hit hit = s.control("picture", "img", view.name, grip.figure.description, area);
+    const std::string busy = session.computing && view.view == View::pair ? " The section is being computed." : "";
+    const Hit hit = s.control("picture", "img", view.name, grip.figure.description + busy, area);
     const bool down = s.topmost && ImGui::IsMouseDown(ImGuiMouseButton_Left);
     if (s.topmost && hit.held && ImGui::IsMouseClicked(ImGuiMouseButton_Left)) {
         if (const Handle* near = handle_near(grip.figure, pointer, s.surface.touch)) {

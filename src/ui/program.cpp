@@ -9,6 +9,7 @@
 #include <utility>
 
 #include "paper/plan_file.hpp"
+#include "ui/keyboard.hpp"
 #include "ui/parts.hpp"
 #include "ui/section_work.hpp"
 #include "ui/theme.hpp"
@@ -69,10 +70,7 @@ struct Program::State final : PointerOut {
                (session.preferences.theme == Theme::system && surface.system_dark);
     }
     void fit_typeface(const Screen& screen);
-    void keys();
-    void move_focus(int by);
-    void nudge(double by);
-    /// One step on Pair's section, where it is open.
+    /// Orders the next step of Pair's section, where it is open, and takes in the last.
     void work_on_section();
     void draw(Screen& screen);
     void keep();
@@ -210,6 +208,12 @@ void Program::opened(std::string_view file_name, std::string_view contents) {
     if (!fault.empty()) state_->session.say_notice(state_->session.words(fault));
 }
 
+void Program::reckoned(std::string_view answer) {
+    State& s = *state_;
+    s.section.take(answer);
+    if (s.session.view.view == View::pair) s.frames_left = std::max(s.frames_left, 1);
+}
+
 void Program::restore(std::string_view name, std::string_view text) {
     State& s = *state_;
     if (name == "preferences") s.stored_preferences = s.session.preferences = read_preferences(text);
@@ -238,65 +242,6 @@ void Program::State::fit_typeface(const Screen& screen) {
     font_changed = true;
 }
 
-void Program::State::nudge(double by) {
-    std::string key = session.view.focus;
-    for (const char* start : {"field.", "handle."})
-        if (key.rfind(start, 0) == 0) {
-            key.erase(0, std::string_view(start).size());
-            const auto field = find_field(session.plan, key);
-            const auto value = number_at(session.plan, key);
-            if (field && value) session.set(key, std::clamp(*value + by * field->step, field->low, field->high));
-            return;
-        }
-}
-
-void Program::State::move_focus(int by) {
-    std::vector<const Mark*> stops;
-    for (const Mark& mark : marks)
-        if (mark.role != "img" && mark.id.rfind("scroll.", 0) != 0) stops.push_back(&mark);
-    if (stops.empty()) return;
-    const auto now =
-        std::find_if(stops.begin(), stops.end(), [&](const Mark* m) { return m->id == session.view.focus; });
-    const auto count = static_cast<std::ptrdiff_t>(stops.size());
-    const std::ptrdiff_t next =
-        now == stops.end() ? (by > 0 ? 0 : count - 1) : (now - stops.begin() + by + count) % count;
-    const Mark& mark = *stops[static_cast<std::size_t>(next)];
-    session.view.focus = mark.id;
-    if (mark.shown) return;
-    for (const auto& [id, region] : scrolls.all()) {
-        if (!region.seen || region.across || mark.box.x < region.box.x || mark.box.right() > region.box.right())
-            continue;
-        scrolls[id].at = std::clamp(region.at + mark.box.y - region.box.y - region.box.height / 3, 0.0, region.most);
-    }
-}
-
-void Program::State::keys() {
-    ImGuiIO& io = ImGui::GetIO();
-    const auto struck = [](ImGuiKey key, bool repeat = false) { return ImGui::IsKeyPressed(key, repeat); };
-    if (struck(ImGuiKey_Escape)) {
-        if (!session.view.sheets.empty())
-            session.close();
-        else if (!session.view.edit.key.empty())
-            session.view.edit = {};
-        else
-            session.view.focus.clear();
-    }
-    if (io.WantTextInput) return;
-    if (io.KeyCtrl && struck(ImGuiKey_Z, true)) io.KeyShift ? session.redo() : session.undo();
-    if (io.KeyCtrl && struck(ImGuiKey_Y, true)) session.redo();
-    if (struck(ImGuiKey_Tab, true)) move_focus(io.KeyShift ? -1 : 1);
-    if (struck(ImGuiKey_UpArrow, true) || struck(ImGuiKey_RightArrow, true)) nudge(1);
-    if (struck(ImGuiKey_DownArrow, true) || struck(ImGuiKey_LeftArrow, true)) nudge(-1);
-    const bool typing = !session.view.sheets.empty() && (session.view.sheets.back().kind == Sheet::Kind::keypad ||
-                                                         session.view.sheets.back().kind == Sheet::Kind::rename);
-    if (typing) return;
-    if ((struck(ImGuiKey_Enter) || struck(ImGuiKey_Space)) && !session.view.focus.empty())
-        presses.push_back(session.view.focus);
-    if (io.KeyCtrl || io.KeyAlt || !session.view.sheets.empty()) return;
-    for (std::size_t i = 0; i < views().size() && i < 9; ++i)
-        if (struck(static_cast<ImGuiKey>(ImGuiKey_1 + static_cast<int>(i)))) session.view.view = views()[i].view;
-}
-
 static void notice_ui(Screen& s) {
     Session& session = s.session;
     if (session.notice.empty() || session.now >= session.notice_until) return session.notice.clear();
@@ -310,12 +255,16 @@ static void notice_ui(Screen& s) {
 
 void Program::State::work_on_section() {
     session.section = nullptr;
+    session.computing = false;
     if (session.view.view != View::pair || !session.stale.empty()) return;
-    section.step(session.plan, session.view.field, !grip.field.empty(), session.now);
+    std::optional<std::string> order = section.step(session.plan, session.view.field, !grip.field.empty(), session.now);
+    if (order) session.requests.push_back({Request::Kind::reckon, "section", std::move(*order)});
     session.section = section.section();
-    session.no_section = section.reason();
-    // The answers speak of the usual way to turn the antenna.
-    if (session.section && session.section->separation && session.view.field == Polarisation::along)
+    session.no_section = section.current() ? section.reason() : std::string();
+    session.computing = section.computing(session.now);
+    // The answers speak of the usual way to turn the antenna, and of the plan as it is now.
+    if (session.section && session.section->separation && session.view.field == Polarisation::along &&
+        section.current())
         settle(session.answers, session.plan, *session.section->separation);
 }
 
@@ -396,7 +345,7 @@ void Program::frame(double now) {
     const Plan before = s.session.plan;
     const ViewState view_before = s.session.view;
     ImGui::NewFrame();
-    s.keys();
+    act_on_keys(s.session, s.scrolls, s.marks, s.presses);
     s.session.refresh();
     s.work_on_section();
     s.draw(screen);

@@ -19,7 +19,9 @@ struct Request {
         open_file,  ///< let the person pick a plan file; answer with Program::opened()
         edit_text,  ///< lay a text field over box (css px), holding `text`; answer with Program::typed(name, ...)
         copy,       ///< put `text` on the clipboard
-        announce    ///< `text` for a screen reader, politely
+        announce,   ///< `text` for a screen reader, politely
+        reckon      ///< give `text` to a PairDesk (paper/pair_desk.hpp) where that holds up no frame, and its answer to
+                    ///< Program::reckoned(); an order still under way or waiting then is no longer wanted
     };
     Kind kind = Kind::store;
     std::string name, text;
@@ -56,6 +58,8 @@ class Program {
     void character(unsigned codepoint);
     void typed(std::string_view name, std::string_view text, bool keep);
     void opened(std::string_view file_name, std::string_view contents);
+    /// The answer to an order, for the next frame; empty when it could not be computed.
+    void reckoned(std::string_view answer);
     /// Stored text from an earlier visit ("plan", "preferences"); call before the first frame.
     void restore(std::string_view name, std::string_view text);
 

@@ -6,7 +6,8 @@ namespace gg {
 void section_switches_ui(Screen& s, Box row) {
     Session& session = s.session;
     if (!session.section) {
-        s.label(row, session.words(session.no_section), {s.small, s.colours.soft_ink});
+        const std::string words = session.computing ? "Computing the section" : session.words(session.no_section);
+        s.label(row, words, {s.small, s.colours.soft_ink});
         return;
     }
     SectionLook& look = session.view.look;

@@ -53,8 +53,9 @@ struct Session {
     double notice_until = 0.0;
     double now = 0.0;
     bool gesture = false;                  ///< a drag or a held button is changing the plan
-    const PairSection* section = nullptr;  ///< of `plan`, while Pair is open; null: `no_section` says why
+    const PairSection* section = nullptr;  ///< while Pair is open, the newest there is; null: `no_section` says why
     std::string no_section;
+    bool computing = false;  ///< a newer section, or more of it, is on its way
 
     Session();
     /// Brings the answers up to the plan; does nothing where they are.

@@ -4,6 +4,7 @@
 #include <string>
 
 #include "draw/figure.hpp"
+#include "paper/pair_desk.hpp"
 #include "ui/program.hpp"
 #include "wave/embedded.hpp"
 
@@ -18,7 +19,12 @@ int main() {
         surface.touch = touch;
         program.set_surface(surface);
         double now = 0.0;
-        const auto frame = [&] { program.frame(now += 0.016); };
+        PairDesk desk;
+        const auto frame = [&] {
+            program.frame(now += 0.016);
+            for (const Request& request : program.take_requests())
+                if (request.kind == Request::Kind::reckon) program.reckoned(desk.answer(request.text));
+        };
         for (const ViewRow& view : views()) {
             program.press("view." + std::string(view.id));
             for (int i = 0; i < 90; ++i) frame();  // Pair's section and its searches come to rest, too

@@ -8,6 +8,8 @@
 #include <limits>
 #include <nlohmann/json.hpp>
 
+#include "draw/units.hpp"
+#include "paper/pair_desk.hpp"
 #include "paper/plan_file.hpp"
 #include "ui/history.hpp"
 #include "ui/imgui_canvas.hpp"
@@ -22,6 +24,10 @@ struct Bench {
     Program program{embedded::font_ttf()};
     Surface surface;
     double now = 1.0;
+    std::vector<Request> requests;  ///< all but the orders, which are answered after their frame
+    PairDesk desk;
+    bool answers = true;  ///< false: the orders wait in `orders`
+    std::vector<std::string> orders;
 
     explicit Bench(double width = 360, double height = 640, bool touch = true) {
         surface.width = width;
@@ -30,8 +36,19 @@ struct Bench {
         program.set_surface(surface);
         frames(3);
     }
+    void frame(double seconds = 0.016) {
+        program.frame(now += seconds);
+        for (Request& r : program.take_requests()) {
+            if (r.kind != Request::Kind::reckon)
+                requests.push_back(std::move(r));
+            else if (answers)
+                program.reckoned(desk.answer(r.text));
+            else
+                orders.push_back(std::move(r.text));
+        }
+    }
     void frames(int n) {
-        for (int i = 0; i < n; ++i) program.frame(now += 0.016);
+        for (int i = 0; i < n; ++i) frame();
     }
     nlohmann::json control(const std::string& id) {
         for (const auto& c : nlohmann::json::parse(program.controls_json(), nullptr, false))
@@ -73,7 +90,7 @@ struct Bench {
         frames(2);
     }
     void wait(double seconds) {
-        for (double t = 0; t < seconds; t += 0.1) program.frame(now += 0.1);
+        for (double t = 0; t < seconds; t += 0.1) frame(0.1);
     }
 };
 
@@ -188,10 +205,8 @@ TEST_CASE("every grip of every picture drags its number, and undo takes the drag
             b.press("redo");
             CHECK(!(b.program.plan() == before));
             // Whatever the drag set moving comes to rest: nothing is drawn any more.
-            for (int i = 0; i < 200 && std::isfinite(b.program.wake_after()); ++i) {
-                b.now += std::max(0.016, b.program.wake_after());
-                b.program.frame(b.now);
-            }
+            for (int i = 0; i < 200 && std::isfinite(b.program.wake_after()); ++i)
+                b.frame(std::max(0.016, b.program.wake_after()));
             CHECK(std::isinf(b.program.wake_after()));
         }
     }
@@ -261,8 +276,7 @@ TEST_CASE("an idle screen asks for no frame, in bounded time") {
         b.press("field.target.size.more");
         int drawn = 0;
         while (b.program.wake_after() < 1e9 && drawn < 60) {
-            b.now += std::max(0.016, b.program.wake_after());
-            b.program.frame(b.now);
+            b.frame(std::max(0.016, b.program.wake_after()));
             ++drawn;
         }
         CHECK(drawn < 20);
@@ -272,17 +286,17 @@ TEST_CASE("an idle screen asks for no frame, in bounded time") {
 
 TEST_CASE("plan and preferences are handed out to be kept, and come back") {
     Bench b;
-    (void)b.program.take_requests();
+    b.requests.clear();
     b.press("field.target.size.more");
     b.wait(0.5);
     std::string plan;
-    for (const Request& r : b.program.take_requests())
+    for (const Request& r : b.requests)
         if (r.kind == Request::Kind::store && r.name == "plan") plan = r.text;
     REQUIRE(!plan.empty());
     b.press("menu");
     b.press("units.1");
     std::string likes;
-    for (const Request& r : b.program.take_requests())
+    for (const Request& r : b.requests)
         if (r.kind == Request::Kind::store && r.name == "preferences") likes = r.text;
     REQUIRE(read_preferences(likes).units == UnitSystem::imperial);
 
@@ -307,12 +321,12 @@ TEST_CASE("preferences read back as written, and rubbish gives the usual ones") 
 TEST_CASE("a broken file is refused with a sentence and the plan stays") {
     Bench b;
     const Plan before = b.program.plan();
-    (void)b.program.take_requests();
+    b.requests.clear();
     b.program.opened("rubbish.json", "{]");
     b.frames(3);
     CHECK(b.program.plan() == before);
     bool said = false;
-    for (const Request& r : b.program.take_requests()) said |= r.kind == Request::Kind::announce;
+    for (const Request& r : b.requests) said |= r.kind == Request::Kind::announce;
     CHECK(said);
 }
 
@@ -359,18 +373,106 @@ TEST_CASE("Pair shows the section, measures it once the plan rests, and then is 
     b.wait(2.0);
     CHECK(b.value("picture").find(" raw, ") != std::string::npos);
 
-    // While a finger moves the gap nothing is measured; when it lifts, it is measured anew.
+    // While a finger moves the gap the verdict is measured; when it lifts, so are the least gaps.
     const Point grip = b.centre("handle.target.gap");
     b.program.pointer_button(grip.x, grip.y, true, true);
     b.frames(3);
     b.program.pointer_move(grip.x + 20, grip.y, true);
-    b.frames(2);
-    CHECK(b.value("picture").find(" raw, ") == std::string::npos);
-    CHECK(b.value("picture").find("By travel times") != std::string::npos);
+    b.frames(3);
+    CHECK(b.program.plan().target.gap > 0.4);
+    const auto gap = say(b.program.plan().target.gap, Quantity::length, UnitSystem::metric);
+    CHECK(b.value("picture").find("Two at " + gap) != std::string::npos);
+    CHECK(b.value("picture").find(" focused.") == std::string::npos);
     b.program.pointer_button(grip.x + 20, grip.y, false, true);
     b.wait(2.0);
     CHECK(b.value("picture").find(" raw, ") != std::string::npos);
-    CHECK(b.program.plan().target.gap > 0.4);
+    CHECK(b.value("picture").find(" focused.") != std::string::npos);
+}
+
+TEST_CASE("while the section is computed elsewhere the screen goes on, says so, and keeps the last one") {
+    Bench b(1440, 900, false);
+    b.answers = false;
+    b.press("view.pair");
+    REQUIRE(b.orders.size() == 1);
+    CHECK(b.value("section.gain") == "(not there)");
+    b.wait(3.0);
+    CHECK(b.orders.size() == 1);  // one is out at a time
+    CHECK(b.value("picture").find("being computed") != std::string::npos);
+    CHECK(std::isinf(b.program.wake_after()));  // and an idle screen waits without drawing
+    b.program.reckoned(b.desk.answer(b.orders.back()));
+    CHECK(b.program.wake_after() == 0.0);
+    b.frame();
+    CHECK(b.value("section.gain") == "Even gain");
+    REQUIRE(b.orders.size() == 2);                                          // its focused picture
+    CHECK(b.value("picture").find("being computed") == std::string::npos);  // not yet: it has just begun
+
+    // Changes wait for the answer, and the last of them wins.
+    b.program.reckoned(b.desk.answer(b.orders.back()));
+    b.wait(0.6);
+    const std::size_t before = b.orders.size();
+    for (int i = 0; i < 5; ++i) b.press("field.target.depth.more");
+    CHECK(b.orders.size() == before);
+    CHECK(b.value("section.gain") == "Even gain");  // the last section is still there
+    b.program.reckoned(b.desk.answer(b.orders.back()));
+    b.frames(2);
+    REQUIRE(b.orders.size() == before + 1);
+    REQUIRE(read_order(b.orders.back()));
+    CHECK(read_order(b.orders.back())->plan.target.depth == b.program.plan().target.depth);
+    // What was measured of the plan before does not settle the answers of this one.
+    CHECK(b.program.answers_json().find("apart.focused") == std::string::npos);
+    b.program.reckoned(b.desk.answer(b.orders.back()));
+    b.answers = true;
+    b.wait(2.0);
+    b.press("section.gain");
+    b.wait(2.0);
+    CHECK(b.program.answers_json().find("apart.focused") != std::string::npos);
+}
+
+TEST_CASE("an order of a plan gone by is given up after a while, and its late answer is passed over") {
+    Bench b(1440, 900, false);
+    b.answers = false;
+    b.press("view.pair");
+    b.press("field.target.depth.more");
+    REQUIRE(b.orders.size() == 1);
+    b.wait(1.5);
+    REQUIRE(b.orders.size() == 2);
+    b.program.reckoned(b.desk.answer(b.orders[0]));
+    b.frame();
+    CHECK(b.value("section.gain") == "(not there)");
+    b.program.reckoned(b.desk.answer(b.orders[1]));
+    b.frame();
+    CHECK(b.value("section.gain") == "Even gain");
+}
+
+TEST_CASE("an answer that is none says so, and is not asked for again until something changes") {
+    for (const std::string& wrong : {std::string(), std::string("gg-pair\n rubbish")}) {
+        Bench b;
+        b.answers = false;
+        b.press("view.pair");
+        REQUIRE(b.orders.size() == 1);
+        b.program.reckoned(wrong);
+        b.wait(2.0);
+        CHECK(b.orders.size() == 1);
+        CHECK(b.value("section.gain") == "(not there)");
+        CHECK(std::isinf(b.program.wake_after()));
+        b.press("field.target.gap.more");
+        CHECK(b.orders.size() == 2);
+        b.program.reckoned(b.desk.answer(b.orders.back()));
+        b.frame();
+        CHECK(b.value("section.gain") == "Even gain");
+    }
+}
+
+TEST_CASE("another plan altogether does not wear the section of the one before") {
+    Bench b(1440, 900, false);
+    b.press("view.pair");
+    b.wait(2.0);
+    CHECK(b.value("section.gain") == "Even gain");
+    b.answers = false;
+    b.program.opened("deck", demos()[1].json);
+    b.frames(3);
+    CHECK(b.value("section.gain") == "(not there)");
+    CHECK(b.value("picture").find(" raw") == std::string::npos);
 }
 
 TEST_CASE("Pair without a section has no switches for it, and keeps its picture") {

@@ -1,19 +1,27 @@
 // The page around the program: it draws a frame when something happened, and sleeps otherwise.
-import { loadProgram } from './bridge.js';
+import { compile, runProgram } from './bridge.js';
 import { makeField } from './field.js';
 import { copyText, makeOpener, saveFile } from './files.js';
 import { keep, recall } from './keep.js';
 import { listenToKeys } from './keys.js';
 import { makeMirror } from './mirror.js';
 import { listenToPointers } from './pointer.js';
+import { makeReckoner, reckonForPage } from './reckon.js';
 import { watchSurface } from './surface.js';
 import { offerUpdates } from './update.js';
 
-const surface = document.getElementById('surface');
 const mirrorPause = 120; // ms after the last frame: a drag draws many frames and needs one mirror
 
-async function start() {
-    const program = await loadProgram();
+/// Where this script is to be had again, for a worker: its own address, or its text where it is part of the page.
+function findScript() {
+    const { src, textContent } = document.currentScript;
+    return src ? () => src : () => URL.createObjectURL(new Blob([textContent], { type: 'text/javascript' }));
+}
+
+async function start(script) {
+    const wasm = await compile();
+    const program = await runProgram(wasm);
+    const surface = document.getElementById('surface');
     const storage = openStorage();
     let drawn = 0;
     let asked = 0;
@@ -35,6 +43,10 @@ async function start() {
     const mirror = makeMirror(program, kick);
     const edit = makeField(program, kick);
     const openFile = makeOpener(program, kick);
+    const reckoner = makeReckoner(program, wasm, script, (bytes) => {
+        program.reckoned(bytes);
+        kick();
+    });
 
     function serve() {
         const text = program.requests();
@@ -46,6 +58,7 @@ async function start() {
             if (request.kind === 'edit_text') edit(request);
             if (request.kind === 'copy') copyText(request.text);
             if (request.kind === 'announce') mirror.announce(request.text);
+            if (request.kind === 'reckon') reckoner.order(request.text);
         }
         return true;
     }
@@ -107,7 +120,8 @@ async function start() {
         answers: () => JSON.parse(program.answers()),
         plan: () => JSON.parse(program.plan()),
         frames: () => drawn,
-        settled: () => settled && !asked,
+        settled: () => settled && !asked && !reckoner.state().waiting,
+        reckoner: reckoner.state,
     });
 }
 
@@ -128,8 +142,11 @@ function toggleText() {
     document.getElementById('text-view').setAttribute('aria-pressed', String(on));
 }
 
-start().catch((reason) => {
+function apologise(reason) {
     const loading = document.getElementById('loading');
     loading.hidden = false;
-    loading.textContent = `Groundgrain could not start in this browser: ${reason.message ?? reason}. A browser of 2023 or later should do.`;
-});
+    loading.textContent = `Groundgrain could not start in this browser. ${reason.message ?? reason}`;
+}
+
+if (typeof document === 'undefined') reckonForPage();
+else start(findScript()).catch(apologise);
