@@ -4,7 +4,9 @@
 #include <cmath>
 #include <optional>
 
-#include "echo/transform.hpp"
+#include "echo/engine.hpp"
+#include "echo/noise.hpp"
+#include "echo/still.hpp"
 #include "wave/fourier.hpp"
 
 namespace gg {
@@ -88,6 +90,11 @@ Dip read(const Columns& c, double x1, double x2, double place1, double place2, d
     return dip;
 }
 
+bool stands(const Scene& scene) {
+    const Issue issue = materials_issue(scene);
+    return fault_of(scene).empty() && (issue == Issue::none || issue == Issue::outside_band);
+}
+
 /// What a dip has over what it needs; below 0 it does not part.
 double margin(const Dip& dip) { return dip.depth > 0.0 ? dip.depth - dip.needed : -dip.needed; }
 
@@ -150,41 +157,124 @@ double sideways_rule(const Scene& scene, double depth) {
     return std::sqrt(v * depth * pulse_width(scene) / 2.0);
 }
 
-/// Depth past which nothing is read in a focused image, m: both centres and two pulses more.
-double read_down_to(const Scene& scene) {
-    const double depth = std::max(scene.targets[0].depth, scene.targets[1].depth);
-    const double v = effective_speed(scene.ground, depth, scene.pulse.centre_frequency).value;
-    return depth + v * pulse_width(scene);
+/// What is read of a focused image: the tops of both, and on either side what makes up their envelope.
+Depths read_at(const Scene& scene) {
+    const RoundTarget &a = scene.targets[0], &b = scene.targets[1];
+    const double top_a = a.depth - a.radius, top_b = b.depth - b.radius;
+    const double v = effective_speed(scene.ground, std::max(a.depth, b.depth), scene.pulse.centre_frequency).value;
+    const double margin = 2.0 * v * pulse_width(scene);
+    return {std::max(0.0, std::min(top_a, top_b) - margin), std::max(top_a, top_b) + margin};
 }
 
-/// Root mean square of the noise in what is read: in the record, or in the focused image before that is made 1.
-double noise_of(const Scene& scene, const Section& section, Reading reading) {
-    if (reading == Reading::raw) return rms(section.noise);
-    const Image noise = focused(scene, section.noise, {0.0, read_down_to(scene)});
+/// Root mean square of noise of `level` in what is read: in the record, or in the focused image before that is made 1.
+double noise_of(const Scene& scene, double level, Reading reading) {
+    if (reading == Reading::raw || !(level > 0.0)) return level;
+    const std::size_t count =
+        static_cast<std::size_t>(scene.sampling.traces) * static_cast<std::size_t>(scene.sampling.samples);
+    const Image noise = focused(scene, white_noise(count, level, scene.noise.seed), read_at(scene));
     return noise.issue == Issue::none ? rms(noise.values) * noise.peak : 0.0;
 }
 
-Dip dip_with(const Scene& scene, const Section& section, Reading reading, double sigma) {
+Dip dip_with(const Scene& scene, const std::vector<double>& record, Reading reading, double sigma) {
     const RoundTarget& a = scene.targets[0].x <= scene.targets[1].x ? scene.targets[0] : scene.targets[1];
     const RoundTarget& b = &a == &scene.targets[0] ? scene.targets[1] : scene.targets[0];
     const double top_a = a.depth - a.radius, top_b = b.depth - b.radius, width = pulse_width(scene);
+    const Sampling& s = scene.sampling;
     if (reading == Reading::raw) {
-        const Columns c{section.traces, section.samples, section.first,   section.step,
-                        section.start,  section.dt,      &section.targets};
+        const Columns c{s.traces, s.samples, s.first, s.step, s.start, s.window / s.samples, &record};
         return read(c, a.x, b.x, time_to(scene, top_a), time_to(scene, top_b), width, sigma);
     }
-    const Image image = focused(scene, section.targets, {0.0, read_down_to(scene)});
+    const Image image = focused(scene, record, read_at(scene));
     if (image.issue != Issue::none) return {};
-    const Columns c{image.traces, image.rows, image.first, image.step, 0.0, image.spacing, &image.values};
+    const Columns c{image.traces, image.rows, image.first, image.step, image.top, image.spacing, &image.values};
     const double v = effective_speed(scene.ground, a.depth, scene.pulse.centre_frequency).value;
     return read(c, a.x, b.x, top_a, top_b, 0.5 * v * width, image.peak > 0.0 ? sigma / image.peak : 0.0);
+}
+
+/// Two neighbours side by side that are moved apart and together about their midpoint. What does not depend on the gap
+/// is kept from one to the next, over gaps down to 1/2.5 of the widest.
+class Neighbours {
+  public:
+    Neighbours(const Scene& pair, Reading reading) : pair_(pair), reading_(reading) {
+        pair_.targets.resize(2);
+        middle_ = 0.5 * (pair_.targets[0].x + pair_.targets[1].x);
+    }
+    /// What the dip at a gap has over what it needs; below 0 they are one.
+    double margin_at(double gap) {
+        if (!(gap <= widest_ && gap >= widest_ / range)) prepare(gap);
+        if (look_.sampling.traces < 3) return -1.0;
+        place(look_, gap);
+        return margin(dip_with(look_, engine_->echoes({look_.targets[0].x, look_.targets[1].x}), reading_, sigma_));
+    }
+
+  private:
+    static constexpr double range = 2.5;
+    void place(Scene& scene, double gap) const {
+        scene.targets[0].x = middle_ - 0.5 * gap;
+        scene.targets[1].x = middle_ + 0.5 * gap;
+    }
+    void prepare(double gap) {
+        widest_ = gap;
+        place(pair_, gap);
+        const double depth = std::max(pair_.targets[0].depth, pair_.targets[1].depth);
+        const double aperture = reading_ == Reading::raw ? gap : 0.5 * gap + 1.2 * depth;
+        const double far = reading_ == Reading::raw ? 1.0 : std::hypot(aperture, depth) / depth;
+        look_ = close_look(pair_, middle_, aperture, time_to(pair_, depth) * far);
+        engine_.emplace(look_, glance, 0.5 * gap * (1.0 - 1.0 / range));
+        if (sigma_ < 0.0) sigma_ = noise_of(look_, noise_level(look_, still_of(look_, glance).direct), reading_);
+    }
+
+    Scene pair_, look_;
+    Reading reading_;
+    double middle_ = 0.0, widest_ = 0.0;
+    double sigma_ = -1.0;  // hardly changes with the gap
+    std::optional<Engine> engine_;
+};
+
+/// Trace above the upper target.
+int column_above(const Scene& scene, double x) {
+    const Sampling& s = scene.sampling;
+    return std::clamp(static_cast<int>(std::lround((x - s.first) / s.step)), 0, s.traces - 1);
+}
+
+/// @param record  Section::targets
+Dip dip_down_with(const Scene& scene, const std::vector<double>& record, double sigma) {
+    const RoundTarget* upper = &scene.targets[0];
+    const RoundTarget* lower = upper;
+    double late = 0.0;
+    if (scene.targets.size() > 1) {
+        lower = &scene.targets[1];
+        if (lower->depth < upper->depth) std::swap(upper, lower);
+        late = time_to(scene, lower->depth - lower->radius);
+    } else {
+        // Through the wall and the filling to the bottom and back.
+        const double f = scene.pulse.centre_frequency, wall = upper->wall ? upper->wall->thickness : 0.0;
+        late = time_to(scene, upper->depth - upper->radius);
+        if (upper->inside.model != Model::metal)
+            late += 4.0 * (upper->radius - wall) / plane_wave(upper->inside, f).speed;
+        if (upper->wall) late += 2.0 * wall / plane_wave(upper->wall->material, f).speed;
+    }
+    const Sampling& s = scene.sampling;
+    const auto from = record.begin() + static_cast<std::ptrdiff_t>(column_above(scene, upper->x)) * s.samples;
+    return dip_down({from, from + s.samples}, s.window / s.samples,
+                    time_to(scene, upper->depth - upper->radius) - s.start, late - s.start, sigma);
+}
+
+/// What the dip down the trace at x has over what it needs.
+double margin_down(const Scene& scene, double x) {
+    const Scene look = close_look(scene, x, 0.0, scene.sampling.start + scene.sampling.window);
+    if (!fault_of(look).empty()) return -1.0;
+    const double sigma = noise_level(look, still_of(look, glance).direct);
+    std::vector<double> places;
+    for (const RoundTarget& target : look.targets) places.push_back(target.x);
+    return margin(dip_down_with(look, Engine(look, glance).echoes(places), sigma));
 }
 
 }  // namespace
 
 Dip dip_sideways(const Scene& scene, const Section& section, Reading reading) {
     if (!section.ok() || scene.targets.size() < 2 || section.traces < 3) return {};
-    return dip_with(scene, section, reading, noise_of(scene, section, reading));
+    return dip_with(scene, section.targets, reading, noise_of(scene, rms(section.noise), reading));
 }
 
 Dip dip_down(const std::vector<double>& trace, double dt, double early, double late, double sigma) {
@@ -202,57 +292,23 @@ Dip dip_down(const std::vector<double>& trace, double dt, double early, double l
 
 Dip dip_downwards(const Scene& scene, const Section& section) {
     if (!section.ok() || scene.targets.empty()) return {};
-    const RoundTarget* upper = &scene.targets[0];
-    const RoundTarget* lower = upper;
-    double late = 0.0;
-    if (scene.targets.size() > 1) {
-        lower = &scene.targets[1];
-        if (lower->depth < upper->depth) std::swap(upper, lower);
-        late = time_to(scene, lower->depth - lower->radius);
-    } else {
-        // Through the wall and the filling to the bottom and back.
-        const double f = scene.pulse.centre_frequency, wall = upper->wall ? upper->wall->thickness : 0.0;
-        late = time_to(scene, upper->depth - upper->radius);
-        if (upper->inside.model != Model::metal)
-            late += 4.0 * (upper->radius - wall) / plane_wave(upper->inside, f).speed;
-        if (upper->wall) late += 2.0 * wall / plane_wave(upper->wall->material, f).speed;
-    }
-    const int column =
-        std::clamp(static_cast<int>(std::lround((upper->x - section.first) / section.step)), 0, section.traces - 1);
-    const auto from = section.targets.begin() + static_cast<std::ptrdiff_t>(column) * section.samples;
-    return dip_down({from, from + section.samples}, section.dt,
-                    time_to(scene, upper->depth - upper->radius) - section.start, late - section.start,
-                    rms(section.noise));
+    return dip_down_with(scene, section.targets, rms(section.noise));
 }
 
 Value smallest_gap(const Scene& scene, Reading reading) {
-    if (scene.targets.size() < 2 || !fault_of(scene).empty()) return {0.0, Issue::out_of_range};
-    Scene pair = scene;
-    pair.targets.resize(2);
-    RoundTarget &a = pair.targets[0], &b = pair.targets[1];
-    const double middle = 0.5 * (a.x + b.x), rule = sideways_rule(scene, std::max(a.depth, b.depth));
+    if (scene.targets.size() < 2 || !stands(scene)) return {0.0, Issue::out_of_range};
+    const RoundTarget &a = scene.targets[0], &b = scene.targets[1];
+    const double rule = sideways_rule(scene, std::max(a.depth, b.depth));
     const double drop = a.depth - b.depth, touch = a.radius + b.radius;
     const double low =
         std::max({std::sqrt(std::max(0.0, touch * touch - drop * drop)) * 1.01, 1e-3 * rule, 1.01 * 1e-4});
-    std::optional<double> sigma;  // hardly changes with the gap
-    const auto margin_at = [&](double gap) {
-        a.x = middle - 0.5 * gap;
-        b.x = middle + 0.5 * gap;
-        const double depth = std::max(a.depth, b.depth),
-                     aperture = reading == Reading::raw ? gap : 0.5 * gap + 1.2 * depth;
-        const double far = std::hypot(aperture, depth) / depth;
-        const Scene look =
-            close_look(pair, middle, aperture, time_to(pair, depth) * (reading == Reading::raw ? 1.0 : far));
-        const Section section = section_of(look, glance);
-        if (!section.ok() || section.traces < 3) return -1.0;
-        if (!sigma) sigma = noise_of(look, section, reading);
-        return margin(dip_with(look, section, reading, *sigma));
-    };
-    return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule, margin_at);
+    Neighbours neighbours(scene, reading);
+    return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule,
+                    [&](double gap) { return neighbours.margin_at(gap); });
 }
 
 Value smallest_drop(const Scene& scene) {
-    if (scene.targets.size() < 2 || !fault_of(scene).empty()) return {0.0, Issue::out_of_range};
+    if (scene.targets.size() < 2 || !stands(scene)) return {0.0, Issue::out_of_range};
     Scene pair = scene;
     pair.targets.resize(2);
     if (pair.targets[1].depth < pair.targets[0].depth) std::swap(pair.targets[0], pair.targets[1]);
@@ -268,14 +324,13 @@ Value smallest_drop(const Scene& scene) {
     if (!(high > low)) return {0.0, Issue::no_solution};
     const auto margin_at = [&](double drop) {
         b.depth = a.depth + drop;
-        const Scene look = close_look(pair, a.x, 0.0, scene.sampling.start + scene.sampling.window);
-        return margin(dip_downwards(look, section_of(look, glance)));
+        return margin_down(pair, a.x);
     };
     return smallest(low, high, a.radius + b.radius + 0.5 * v * width, margin_at);
 }
 
 Value smallest_diameter(const Scene& scene) {
-    if (scene.targets.empty() || !fault_of(scene).empty()) return {0.0, Issue::out_of_range};
+    if (scene.targets.empty() || !stands(scene)) return {0.0, Issue::out_of_range};
     Scene one = scene;
     one.targets.resize(1);
     RoundTarget& t = one.targets[0];
@@ -291,8 +346,7 @@ Value smallest_diameter(const Scene& scene) {
     const auto margin_at = [&](double diameter) {
         t.radius = 0.5 * diameter;
         t.depth = top + t.radius;
-        const Scene look = close_look(one, t.x, 0.0, scene.sampling.start + scene.sampling.window);
-        return margin(dip_downwards(look, section_of(look, glance)));
+        return margin_down(one, t.x);
     };
     return smallest(low, high, 2.0 * wall + 0.5 * v * width, margin_at);
 }

@@ -81,4 +81,19 @@ std::string fault_of(const Scene& scene) {
     return fault;
 }
 
+Issue materials_issue(const Scene& scene) {
+    Issue worst = Issue::none;
+    const auto ask = [&](const Material& material) {
+        if (material.model == Model::metal) return;
+        const Issue issue = permittivity(material, scene.pulse.centre_frequency).issue;
+        if (worst == Issue::none || (worst == Issue::outside_band && issue != Issue::none)) worst = issue;
+    };
+    for (const Slab& slab : scene.ground.slabs) ask(slab.material);
+    for (const RoundTarget& target : scene.targets) {
+        ask(target.inside);
+        if (target.wall) ask(target.wall->material);
+    }
+    return worst;
+}
+
 }  // namespace gg

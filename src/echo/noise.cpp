@@ -53,4 +53,10 @@ std::vector<double> white_noise(std::size_t count, double rms, std::uint64_t see
     return out;
 }
 
+double noise_level(const Scene& scene, const std::vector<double>& direct) {
+    double peak = 0.0;
+    for (const double value : direct) peak = std::fmax(peak, std::fabs(value));
+    return peak * std::pow(10.0, -scene.noise.dynamic_range / 20.0) / std::sqrt(scene.noise.stacks);
+}
+
 }  // namespace gg

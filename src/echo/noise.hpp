@@ -2,10 +2,16 @@
 #include <cstdint>
 #include <vector>
 
+#include "echo/scene.hpp"
+
 namespace gg {
 
 /// `count` independent normal numbers of root mean square `rms`, the same on every platform for the same seed.
 /// Generator: splitmix64 (Steele, Lea & Flood 2014), ziggurat (Marsaglia & Tsang 2000, 256 layers), both from memory.
 std::vector<double> white_noise(std::size_t count, double rms, std::uint64_t seed);
+
+/// Root mean square of the noise in the scene's record, see NoiseFloor.
+/// @param direct  the direct wave, one trace
+double noise_level(const Scene& scene, const std::vector<double>& direct);
 
 }  // namespace gg

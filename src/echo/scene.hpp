@@ -91,11 +91,15 @@ struct Section {
 /// that straddle a boundary, touch each other or break the surface, more than six, numbers outside their ranges.
 std::string fault_of(const Scene& scene);
 
+/// The worst of what the scene's materials say of themselves at the centre frequency. Other than none or outside_band:
+/// the section is refused.
+Issue materials_issue(const Scene& scene);
+
 /// The section, from Maxwell's equations: multiple scattering between targets and with all boundaries is included.
 /// Between the samples of the scene nothing is smoothed: a step, window or interval too coarse shows as it would in the
 /// field. Accuracy: 1e-3 of the strongest echo; see section.cpp for what sets it.
-/// @param care  every cut-off and margin of the engine tighter by it, at its price in time: above 1 to see what they
-/// cost, 0.1 where 1 % will do
+/// @param care  0.01 to 100: every cut-off and margin of the engine tighter by it, at its price in time; above 1 to see
+/// what they cost, 0.1 where 1 % will do
 Section section_of(const Scene& scene, double care = 1.0);
 
 }  // namespace gg

@@ -23,22 +23,6 @@ Section refused(Issue issue, std::string reason) {
     return section;
 }
 
-/// The worst of what the materials say of themselves at the centre frequency.
-Issue materials_issue(const Scene& scene) {
-    Issue worst = Issue::none;
-    const auto ask = [&](const Material& material) {
-        if (material.model == Model::metal) return;
-        const Issue issue = permittivity(material, scene.pulse.centre_frequency).issue;
-        if (worst == Issue::none || (worst == Issue::outside_band && issue != Issue::none)) worst = issue;
-    };
-    for (const Slab& slab : scene.ground.slabs) ask(slab.material);
-    for (const RoundTarget& target : scene.targets) {
-        ask(target.inside);
-        if (target.wall) ask(target.wall->material);
-    }
-    return worst;
-}
-
 std::vector<double> places_of(const Scene& scene) {
     std::vector<double> out;
     for (const RoundTarget& target : scene.targets) out.push_back(target.x);
@@ -67,10 +51,7 @@ Section section_of(const Scene& scene, double care) {
     Still still = still_of(scene, care);
     section.layers = std::move(still.layers);
     section.direct = std::move(still.direct);
-    double peak = 0.0;
-    for (const double value : section.direct) peak = std::max(peak, std::fabs(value));
-    const double rms = peak * std::pow(10.0, -scene.noise.dynamic_range / 20.0) / std::sqrt(scene.noise.stacks);
-    section.noise = white_noise(section.targets.size(), rms, scene.noise.seed);
+    section.noise = white_noise(section.targets.size(), noise_level(scene, section.direct), scene.noise.seed);
     return section;
 }
 
