@@ -4,15 +4,11 @@
 
 #include <algorithm>
 
+#include "sections.hpp"
+
 using namespace gg;
 
 namespace {
-
-Material metal() {
-    Material m;
-    m.model = Model::metal;
-    return m;
-}
 
 Scene pair(double gap) {
     Scene s;

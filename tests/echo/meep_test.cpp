@@ -71,9 +71,33 @@ std::vector<double> recorded(const std::string& name, std::size_t samples) {
     return all;
 }
 
+/// What the solver says: as many numbers as `computed` gives, and how much of them may be the solver's own error.
+///
+/// Without metal the solver's error falls with the square of its cell (with the cell itself where layers conduct well),
+/// so the two grids give what cells of no size would: fine + beyond_fine (fine - coarse). Measured, that leaves 0.1 to
+/// 0.7 %, so 1 % is held everywhere. Metal is drawn in whole cells, its error leaps from grid to grid and cannot be
+/// carried on: those scenes are compared with the fine grid, to 1 % or the error estimated from the two.
+struct Reference {
+    std::vector<double> traces;
+    double bound = 0.01;
+};
+Reference reference_for(const json& j, const json& recording) {
+    const std::string name = j.at("name");
+    Reference r{recorded(name + "_fine.csv", j.at("samples"))};
+    const auto& targets = j.at("targets");
+    if (std::any_of(targets.begin(), targets.end(), [](const json& t) { return t.value("metal", false); })) {
+        r.bound = std::max(0.01, recording.at("rms_error_of_fine").get<double>());
+        return r;
+    }
+    const std::vector<double> coarse = recorded(name + "_coarse.csv", j.at("samples"));
+    REQUIRE(coarse.size() == r.traces.size());
+    const double beyond = recording.at("beyond_fine");
+    for (std::size_t i = 0; i < coarse.size(); ++i) r.traces[i] += beyond * (r.traces[i] - coarse[i]);
+    return r;
+}
+
 /// All positions of the first separation, then of the next.
-std::vector<double> computed(const json& j) {
-    Scene s = scene_from(j);
+std::vector<double> computed(const json& j, Scene s) {
     std::vector<double> all;
     for (const double separation : j.at("separations")) {
         s.separation = separation;
@@ -94,31 +118,88 @@ double dot(const std::vector<double>& a, const std::vector<double>& b) {
     return sum;
 }
 
-}  // namespace
+/// Root mean square of theirs - scale * ours, of theirs, with the best real scale.
+struct Fit {
+    double off, scale;
+};
+Fit fit(const std::vector<double>& ours, const std::vector<double>& theirs) {
+    REQUIRE(ours.size() == theirs.size());
+    const double scale = dot(ours, theirs) / dot(ours, ours);
+    std::vector<double> rest(ours.size());
+    for (std::size_t i = 0; i < rest.size(); ++i) rest[i] = theirs[i] - scale * ours[i];
+    return {std::sqrt(dot(rest, rest) / dot(theirs, theirs)), scale};
+}
 
-TEST_CASE(
-    "The section agrees with a general-purpose finite-difference solver to 1 % or to that solver's own grid error") {
+/// Calls f(scene of scenes.json, what the solver says of it) for each that is recorded; returns how many.
+template <class F>
+int for_each_recording(const F& f) {
     const json scenes = read("scenes.json"), recordings = read("recorded.json");
     REQUIRE(scenes.is_object());
     REQUIRE(recordings.is_object());
-    int compared = 0;
+    int count = 0;
     for (const json& j : scenes.at("scenes")) {
         const std::string name = j.at("name");
-        if (!recordings.contains(name)) continue;
-        const std::vector<double> theirs = recorded(name + "_fine.csv", j.at("samples")), ours = computed(j);
         CAPTURE(name);
-        REQUIRE(theirs.size() == ours.size());
-        const double scale = dot(ours, theirs) / dot(ours, ours);
-        std::vector<double> rest(ours.size());
-        for (std::size_t i = 0; i < rest.size(); ++i) rest[i] = theirs[i] - scale * ours[i];
-        const double off = std::sqrt(dot(rest, rest) / dot(theirs, theirs));
-        const json& r = recordings.at(name);
-        const double grid = r.value("rms_error_of_fine", r.at("rms_between_grids").get<double>());
-        MESSAGE(name << ": " << 100.0 * off << " % RMS, the solver's own error " << 100.0 * grid << " %, scale "
-                     << scale);
-        CHECK(off < std::max(0.01, grid));
-        CHECK(std::fabs(scale - 1.0) < std::max(0.02, grid));  // both are V/m for 1 A: no factor should be needed
-        ++compared;
+        REQUIRE(recordings.contains(name));
+        f(j, reference_for(j, recordings.at(name)));
+        ++count;
     }
-    CHECK(compared >= 6);
+    return count;
+}
+
+}  // namespace
+
+TEST_CASE("The section agrees with a general-purpose finite-difference solver to 1 %, or to its error where metal is") {
+    int across = 0;
+    const int compared = for_each_recording([&](const json& j, const Reference& theirs) {
+        const Fit f = fit(computed(j, scene_from(j)), theirs.traces);
+        MESSAGE(j.at("name").get<std::string>()
+                << ": " << 100.0 * f.off << " % RMS of " << 100.0 * theirs.bound << " %, scale " << f.scale);
+        CHECK(f.off < theirs.bound);
+        CHECK(std::fabs(f.scale - 1.0) < std::max(0.02, theirs.bound));  // both are V/m for 1 A: no factor is needed
+        across += j.at("polarisation") == "across" ? 1 : 0;
+    });
+    CHECK(compared >= 14);
+    CHECK(across >= 4);
+}
+
+TEST_CASE("Set beside a slightly wrong scene the solver disagrees by far more") {
+    const auto misses = [](const json& j, const Reference& theirs, const std::string& wrong,
+                           const std::vector<double>& ours) {
+        const double off = fit(ours, theirs.traces).off;
+        MESSAGE(j.at("name").get<std::string>() << ", " << wrong << ": " << 100.0 * off << " %");
+        CHECK(off > 5.0 * theirs.bound);
+    };
+    for_each_recording([&](const json& j, const Reference& theirs) {
+        const Scene right = scene_from(j);
+        Scene turned = right;
+        turned.polarisation = right.polarisation == Polarisation::along ? Polarisation::across : Polarisation::along;
+        misses(j, theirs, "polarisation swapped", computed(j, turned));
+        if (right.targets.empty()) {
+            Scene thicker = right;
+            thicker.ground.slabs[0].thickness += 0.01;
+            misses(j, theirs, "layers 1 cm lower", computed(j, thicker));
+            return;
+        }
+        Scene deeper = right, aside = right;
+        for (RoundTarget& t : deeper.targets) t.depth += 0.01;
+        for (RoundTarget& t : aside.targets) t.x += 0.03;
+        misses(j, theirs, "1 cm deeper", computed(j, deeper));
+        misses(j, theirs, "3 cm aside", computed(j, aside));
+        if (right.targets[0].wall) {
+            Scene bare = right;
+            bare.targets[0].wall.reset();
+            misses(j, theirs, "without its wall", computed(j, bare));
+        }
+        if (right.targets.size() > 1) {
+            std::vector<double> sum(theirs.traces.size());
+            for (const RoundTarget& t : right.targets) {
+                Scene alone = right;
+                alone.targets = {t};
+                const std::vector<double> one = computed(j, alone);
+                for (std::size_t i = 0; i < sum.size(); ++i) sum[i] += one[i];
+            }
+            misses(j, theirs, "without the echoes between targets", sum);
+        }
+    });
 }
