@@ -43,13 +43,22 @@ Ends ends_of(const Matter& matter, double frequency) {
     return ends;
 }
 
-std::unique_ptr<Ground> ground_of(const Plan& plan, Stack stack) {
+using Grounds = std::vector<std::unique_ptr<Ground>>;
+
+std::unique_ptr<Ground> ground_of(const Plan& plan, Stack stack, const Grounds& before) {
     auto ground = std::make_unique<Ground>();
     ground->stack = std::move(stack);
-    for (const Slab& slab : ground->stack.slabs) {
-        ground->waves.push_back(plane_wave(slab.material, plan.antenna.pulse.centre_frequency));
+    PathSpectrum& spectrum = ground->spectrum;
+    spectrum.sent = before.empty() ? std::make_shared<SentSpectrum>(plan.antenna.pulse) : before[0]->spectrum.sent;
+    for (std::size_t i = 0; i < ground->stack.slabs.size(); ++i) {
+        const Material& material = ground->stack.slabs[i].material;
+        ground->waves.push_back(plane_wave(material, plan.antenna.pulse.centre_frequency));
+        const auto same = std::find_if(before.begin(), before.end(),
+                                       [&](const auto& other) { return other->stack.slabs[i].material == material; });
+        spectrum.layers.push_back(same != before.end()
+                                      ? (*same)->spectrum.layers[i]
+                                      : std::make_shared<Wavenumbers>(wavenumbers_of(material, *spectrum.sent)));
     }
-    ground->spectrum = std::make_shared<PathSpectrum>(ground->stack, plan.antenna.pulse);
     return ground;
 }
 
@@ -74,7 +83,7 @@ Case case_of(const Plan& plan, const Ground& ground, double depth) {
     c.separation = plan.antenna.separation;
     c.layer = layer_at(ground.stack, depth);
     c.path = c.path_to(depth);
-    c.echo = EchoPulse(*ground.spectrum, ground.stack, depth, c.height);
+    c.echo = EchoPulse(ground.spectrum, ground.stack, depth, c.height);
     return c;
 }
 
@@ -109,7 +118,7 @@ Cases cases_of(const Plan& plan) {
         const bool last = i + 1 == plan.ground.size();
         vary = vary || ends.back().vary || (!last && layer.thickness.low < layer.thickness.high);
     }
-    cases.grounds.push_back(ground_of(plan, likely));
+    cases.grounds.push_back(ground_of(plan, likely, cases.grounds));
 
     const Range& depth = plan.target.depth;
     cases.all.push_back(case_of(plan, *cases.grounds[0], depth.likely));
@@ -125,7 +134,7 @@ Cases cases_of(const Plan& plan) {
             stack.slabs[i].material = material_of(plan.ground[i].matter, ends[i].*which);
         }
         set_thickness(plan, stack, by_loss, sign);
-        cases.grounds.push_back(ground_of(plan, std::move(stack)));
+        cases.grounds.push_back(ground_of(plan, std::move(stack), cases.grounds));
         return *cases.grounds.back();
     };
     const Ground& fastest = extreme(&Ends::fastest, false, 1);

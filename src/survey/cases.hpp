@@ -13,7 +13,7 @@ namespace gg {
 struct Ground {
     Stack stack;
     std::vector<PlaneWave> waves;
-    std::shared_ptr<const PathSpectrum> spectrum;  ///< wavenumbers over the sent band, shared by all depths
+    PathSpectrum spectrum;  ///< wavenumbers over the sent band, shared by all depths
 };
 
 /// One ground and one depth to the target's top.

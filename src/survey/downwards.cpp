@@ -9,13 +9,13 @@
 namespace gg {
 namespace {
 
-double upright(const EchoPulse& e, double t, bool rings) { return rings ? e.envelope(t) : e.at(t).real(); }
+double upright(const EchoPulse& e, double t, bool rings) { return rings ? e.envelope(t) : e.upright(t); }
 
 bool rings(const EchoPulse& e) {
     double side = 0.0;
     bool fell = false;
     for (double t = 0.0; t < 3.0 * e.width; t += e.width / 16.0) {
-        const double now = e.at(t).real();
+        const double now = e.upright(t);
         fell = fell || now < 0.0;
         if (fell) side = std::max(side, now);
     }
@@ -69,15 +69,15 @@ void add_downwards(const Setting& setting, Answers& answers) {
     const double f = setting.frequency();
     Answer& a = add(answers, Group::downwards, "apart.down", "Told apart downwards", Quantity::length,
                     spread_over(setting.cases, [](const Case& k) {
-                        return 0.5 * k.wave().speed * smallest_delay(k.echo, apart_dip).value;
+                        const Value delay = smallest_delay(k.echo, apart_dip);
+                        return Value{0.5 * k.wave().speed * delay.value, delay.issue};
                     }));
     a.why = "Two thin layers one above the other show as two when they are " + token(a.likely.value, Quantity::length) +
             " apart or more; closer, they look like one.";
     a.formula =
         "Half the speed at the target times the smallest delay at which two equal returned pulses leave a dip of 19 "
         "percent between their crests (Rayleigh's dip).";
-    if (const Value delay = smallest_delay(c.echo, apart_dip); !delay.ok()) {
-        a.likely.issue = delay.issue;
+    if (!a.likely.ok()) {
         a.why = "The returned pulse rings so long that two layers never show as two.";
     }
     const double v = c.wave().speed;

@@ -15,63 +15,66 @@ Complex turn(double angle) { return {std::cos(angle), std::sin(angle)}; }
 
 }  // namespace
 
-PathSpectrum::PathSpectrum(const Stack& stack, const PulseShape& shape) {
+SentSpectrum::SentSpectrum(const PulseShape& shape) {
     const Band band = band_of(shape, floor_db);
+    const double order = order_of(shape);
     spacing = band.width() / lines;
     // In the middle of each strip of the band, so that none falls on 0 Hz.
     first = band.low + 0.5 * spacing;
-    sent.resize(lines);
-    double sum = 0.0;
     for (int i = 0; i < lines; ++i) {
-        sent[i] = spectrum_at(shape, frequency(i));
-        sum += sent[i];
-        sent_frequency += sent[i] * frequency(i);
+        log_sent[i] = log_spectrum(order, frequency(i) / shape.centre_frequency);
+        const double amplitude = std::exp(log_sent[i]);
+        sum += amplitude;
+        mean_frequency += amplitude * frequency(i);
     }
-    sent_frequency /= sum;
-    wavenumber.reserve(stack.slabs.size() * lines);
-    for (const Slab& slab : stack.slabs) {
-        for (int i = 0; i < lines; ++i) wavenumber.push_back(plane_wave(slab.material, frequency(i)).wavenumber);
-    }
+    mean_frequency /= sum;
+}
+
+Wavenumbers wavenumbers_of(const Material& material, const SentSpectrum& sent) {
+    Wavenumbers k;
+    for (int i = 0; i < SentSpectrum::lines; ++i) k[i] = wavenumber(material, sent.frequency(i));
+    return k;
 }
 
 EchoPulse::EchoPulse(const PathSpectrum& spectrum, const Stack& stack, double depth, double height) {
-    constexpr int N = PathSpectrum::lines;
-    std::vector<Complex> exponent(N);  // -2 j sum k h
+    constexpr int N = SentSpectrum::lines;
+    const SentSpectrum& sent = *spectrum.sent;
+    std::array<Complex, N> exponent{};  // -2 j sum k h
     double top = 0.0;
     for (std::size_t layer = 0; layer < stack.slabs.size() && top < depth; ++layer) {
         const bool last = layer + 1 == stack.slabs.size();
         const double h = last ? depth - top : std::min(stack.slabs[layer].thickness, depth - top);
-        for (int i = 0; i < N; ++i) exponent[i] += Complex(0.0, -2.0 * h) * spectrum.wavenumber[layer * N + i];
+        const Wavenumbers& k = *spectrum.layers[layer];
+        for (int i = 0; i < N; ++i) exponent[i] += Complex(2.0 * h * k[i].imag(), -2.0 * h * k[i].real());
         top += h;
     }
     // The strongest line sets the scale, so that no ground however lossy makes the record vanish.
     double strongest = -1e300;
     int peak_line = 0;
-    std::vector<double> level(N);
+    std::array<double, N> level;
     for (int i = 0; i < N; ++i) {
-        level[i] = std::log(std::max(spectrum.sent[i], 1e-30)) + exponent[i].real();
+        level[i] = sent.log_sent[i] + exponent[i].real();
         if (level[i] > strongest) strongest = level[i], peak_line = i;
     }
     // Group delay at the strongest line puts the pulse in the middle of the record.
     const int a = std::max(0, peak_line - 1), b = std::min(N - 1, peak_line + 1);
-    const double delay = -(exponent[b].imag() - exponent[a].imag()) / (2.0 * pi * spectrum.spacing * (b - a));
+    const double delay = -(exponent[b].imag() - exponent[a].imag()) / (2.0 * pi * sent.spacing * (b - a));
 
     std::vector<Complex> padded(table_size);
-    double sum = 0.0, moment = 0.0, sent_sum = 0.0;
+    double sum = 0.0, moment = 0.0;
     const int middle = N / 2;
     for (int i = 0; i < N; ++i) {
         const double amplitude = std::exp(level[i] - strongest);
-        const double f = spectrum.frequency(i);
+        const double f = sent.frequency(i);
         sum += amplitude;
         moment += amplitude * f;
-        sent_sum += spectrum.sent[i];
         const int bin = (i - middle + table_size) % table_size;
         padded[bin] = amplitude * turn(exponent[i].imag() + 2.0 * pi * f * delay);
     }
     frequency = moment / sum;
-    const double carrier_frequency = spectrum.frequency(middle);
+    const double carrier_frequency = sent.frequency(middle);
     const std::vector<Complex> record = inverse(padded);
-    step_ = 1.0 / (spectrum.spacing * table_size);
+    step_ = 1.0 / (sent.spacing * table_size);
     reach = 0.5 * table_size * step_;
 
     int top_at = 0;
@@ -96,10 +99,11 @@ EchoPulse::EchoPulse(const PathSpectrum& spectrum, const Stack& stack, double de
         carrier *= onward;
     }
     const Complex peak = at(shift * step_);
-    for (Complex& z : table_) z /= peak;
+    const Complex scale = 1.0 / peak;
+    for (Complex& z : table_) z *= scale;
     origin_ = shift * step_;
     phase = peak / std::abs(peak) * turn(2.0 * pi * carrier_frequency * offset * step_);
-    loss = -decibel_per_neper * (strongest + std::log(table_size * std::abs(peak) / sent_sum));
+    loss = -decibel_per_neper * (strongest + std::log(table_size * std::abs(peak) / sent.sum));
     measure();
 }
 
@@ -123,21 +127,26 @@ void EchoPulse::measure() {
     tail = last_above(1);
 }
 
-Complex EchoPulse::at(double t) const {
+template <class Part>
+auto EchoPulse::between(double t, Part part) const {
     const double place = (t + origin_ + reach) / step_;
-    if (!(place >= 2.0 && place < table_size - 4)) return {0.0, 0.0};
+    if (!(place >= 2.0 && place < table_size - 4)) return part(Complex{});
     const int i = static_cast<int>(place);
     const double u = place - i;
     // Lagrange through six neighbours at -2 .. 3: with 17 places a period of the centre frequency good to 1e-5.
     const double a = u + 2.0, b = u + 1.0, c = u, d = u - 1.0, e = u - 2.0, f = u - 3.0;
     const double ab = a * b, ef = e * f, cd = c * d;
-    const double w0 = -b * cd * ef / 120.0, w1 = a * cd * ef / 24.0, w2 = -ab * d * ef / 12.0;
-    const double w3 = ab * c * ef / 12.0, w4 = -ab * cd * f / 24.0, w5 = ab * cd * e / 120.0;
     const Complex* z = table_.data() + i - 2;
-    return {
-        w0 * z[0].real() + w1 * z[1].real() + w2 * z[2].real() + w3 * z[3].real() + w4 * z[4].real() + w5 * z[5].real(),
-        w0 * z[0].imag() + w1 * z[1].imag() + w2 * z[2].imag() + w3 * z[3].imag() + w4 * z[4].imag() +
-            w5 * z[5].imag()};
+    return (1.0 / 12.0) * (ab * ef * (c * part(z[3]) - d * part(z[2]))) +
+           (1.0 / 24.0) * (cd * (a * ef * part(z[1]) - ab * f * part(z[4]))) +
+           (1.0 / 120.0) * (cd * (ab * e * part(z[5]) - b * ef * part(z[0])));
+}
+
+Complex EchoPulse::at(double t) const {
+    return between(t, [](const Complex& z) { return z; });
+}
+double EchoPulse::upright(double t) const {
+    return between(t, [](const Complex& z) { return z.real(); });
 }
 
 double EchoPulse::envelope(double t) const { return std::sqrt(std::norm(at(t))); }

@@ -18,7 +18,8 @@ struct Setting {
     double radius() const { return plan.target.shape == TargetShape::flat ? 0.0 : 0.5 * plan.target.size; }
 };
 
-/// Likely value and the ends over all cases. `f` gives a number for a case.
+/// Likely value and the ends over all cases. `f` gives a number for a case, or a Value: the likely one keeps its issue,
+/// and the ends count stand-ins, too.
 struct Spread {
     Value likely;
     double low = 0.0, high = 0.0;
@@ -30,7 +31,7 @@ Spread spread_over(const Cases& cases, F f) {
     s.low = s.high = s.likely.value;
     for (std::size_t i = 1; i < cases.all.size(); ++i) {
         const Value v = finite(f(cases.all[i]));
-        if (!v.ok()) continue;
+        if (v.issue == Issue::not_a_number) continue;
         if (v.value < s.low) s.low = v.value;
         if (v.value > s.high) s.high = v.value;
     }

@@ -25,43 +25,43 @@ double Path::depth() const {
     return z;
 }
 
-Leg leg_to(const Path& path, double offset) {
+Leg leg_to(const Path& path, double offset, double near) {
     // Notation: X offset, q tangent of the angle in the fastest layer, r_i = v_i / v_fastest, m_i = 1 - r_i^2,
     // x(q) = sum h_i r_i q / sqrt(1 + m_i q^2), cos(angle_i) = sqrt((1 + m_i q^2) / (1 + q^2)).
     const double X = std::abs(offset);
     double fastest = 0.0;
     for (int i = 0; i < path.count; ++i) fastest = std::max(fastest, path.speed[i]);
-    double r[Path::most], m[Path::most];
+    double hr[Path::most], m[Path::most];
     double slope = 0.0;
     for (int i = 0; i < path.count; ++i) {
-        r[i] = path.speed[i] / fastest;
-        m[i] = 1.0 - r[i] * r[i];
-        slope += path.thickness[i] * r[i];
+        const double r = path.speed[i] / fastest;
+        m[i] = 1.0 - r * r;
+        hr[i] = path.thickness[i] * r;
+        slope += hr[i];
     }
     if (!(slope > 0.0)) return {};
-    double q = X / slope;
+    const double least = X / slope;
+    double q = std::max(least, near);
     for (int n = 0; n < 50; ++n) {
         double x = 0.0, dx = 0.0;
         for (int i = 0; i < path.count; ++i) {
-            const double root = std::sqrt(1.0 + m[i] * q * q);
-            const double term = path.thickness[i] * r[i] / root;
+            const double root = 1.0 / std::sqrt(1.0 + m[i] * q * q), term = hr[i] * root;
             x += term * q;
-            dx += term / (root * root);
+            dx += term * root * root;
         }
         const double step = (X - x) / dx;
-        q += step;
-        // The time is stationary about the true ray, and the step just taken has squared the error.
-        if (!(std::abs(step) > 1e-6 * q)) break;
+        q = std::max(q + step, least);
+        // The step just taken has squared the error, and the time, stationary about the true ray, squares it again.
+        if (!(std::abs(step) > 1e-4 * q)) break;
     }
     Leg leg;
+    leg.tangent = q;
     const double all = std::sqrt(1.0 + q * q);
-    double cosine = 1.0;
     for (int i = 0; i < path.count; ++i) {
-        cosine = std::sqrt(1.0 + m[i] * q * q) / all;
-        leg.time += path.thickness[i] / (path.speed[i] * cosine);
+        leg.time += path.thickness[i] * all / (path.speed[i] * std::sqrt(1.0 + m[i] * q * q));
     }
-    const double last = r[path.count - 1] * q / all;
-    leg.angle = std::asin(std::min(1.0, last));
+    const double sine = path.speed[path.count - 1] / fastest * q / all;
+    leg.angle = std::asin(std::min(1.0, sine));
     return leg;
 }
 

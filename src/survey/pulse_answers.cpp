@@ -46,7 +46,7 @@ void add_pulse(const Setting& setting, Answers& answers) {
 
     Answer& centre = add(answers, Group::pulse, "target.frequency", "Centre frequency on return", Quantity::frequency,
                          spread_over(setting.cases, [](const Case& k) { return k.echo.frequency; }));
-    const double share = c.echo.frequency / c.ground->spectrum->sent_frequency;
+    const double share = c.echo.frequency / c.ground->spectrum.sent->mean_frequency;
     centre.why = share < 0.95 ? "The ground eats the fine part first: what comes back is centred on " +
                                     token(centre.likely.value, Quantity::frequency) + ", " +
                                     token(share, Quantity::fraction) + " of what was sent."

@@ -2,6 +2,7 @@
 #include <cmath>
 
 #include "survey/parts.hpp"
+#include "survey/rebuild.hpp"
 
 namespace gg {
 
@@ -41,16 +42,9 @@ void draw_pulse(const Setting& setting, Answers& answers) {
         const int i = std::min(static_cast<int>(place), pass.samples - 2);
         const double u = place - i;
         picture.joined[k] = (1.0 - u) * s[i] + u * s[i + 1];
-        if (u < 1e-9) {
-            picture.rebuilt[k] = s[i];
-            continue;
-        }
-        const double sine = std::sin(pi * u) / pi;
-        double sum = 0.0;
         // Enough neighbours that what is left out is under a thousandth of the peak.
         const int a = std::max(from, i - 300), b = std::min(to, i + 300);
-        for (int n = a; n < b; ++n) sum += ((n - i) % 2 == 0 ? sine : -sine) * s[n] / (place - n);
-        picture.rebuilt[k] = sum;
+        if (a < b) picture.rebuilt[k] = sinc_sum({s.data() + a, s.data() + b}, place - a);
     }
 }
 

@@ -1,5 +1,7 @@
 #pragma once
 /// What digitising does to the returned pulse.
+#include <span>
+
 #include "survey/echo_pulse.hpp"
 
 namespace gg {
@@ -14,6 +16,10 @@ struct RebuildError {
 /// upper
 ///                  bound, and well under 1 %.
 RebuildError rebuild_error(const EchoPulse& echo, double interval);
+
+/// sum of values[n] sinc(place - n): a band-limited signal between its samples.
+/// @param place  in samples from the first
+double sinc_sum(std::span<const double> values, double place);
 
 /// ceil(window / interval), where a quotient that is whole but for rounding counts as whole. At least 2.
 int samples_for(double window, double interval);

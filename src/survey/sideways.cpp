@@ -12,6 +12,12 @@ namespace {
 
 constexpr int curve_points = 20;  // cubic between them: 1e-4 of the delay
 
+// Where a peak of two neighbours' response is looked for: from the middle to beyond the target at half the gap.
+constexpr int peak_places = 16;
+double place_of(int i, double gap) { return 0.8 * gap * i / peak_places; }
+
+double dip_under(double peak, double middle) { return peak > 0.0 ? std::clamp(1.0 - middle / peak, 0.0, 1.0) : 0.0; }
+
 }  // namespace
 
 double echo_time(const Case& c, double x, double radius) {
@@ -20,9 +26,10 @@ double echo_time(const Case& c, double x, double radius) {
     const double axis = c.depth + radius;
     double side = 0.0, up = 0.0, time = 0.0;  // point on the rim from the axis
     Path path = c.path_to(axis);
+    Leg down, back;
     for (int turn = 0; turn < 2; ++turn) {
         const double a = x - h - side, b = x + h - side;
-        const Leg down = leg_to(path, a), back = leg_to(path, b);
+        down = leg_to(path, a, down.tangent), back = leg_to(path, b, back.tangent);
         time = down.time + back.time;
         if (turn == 1) break;
         // The rim's normal halves the angle between the legs.
@@ -61,9 +68,19 @@ double pair_response(const EchoPulse& echo, const EchoCurve& curve, double gap, 
 double pair_dip(const EchoPulse& echo, const EchoCurve& curve, double gap) {
     const double middle = pair_response(echo, curve, gap, 0.0);
     double peak = middle;
-    constexpr int n = 16;
-    for (int i = 1; i <= n; ++i) peak = std::max(peak, pair_response(echo, curve, gap, 0.8 * gap * i / n));
-    return peak > 0.0 ? std::clamp(1.0 - middle / peak, 0.0, 1.0) : 0.0;
+    for (int i = 1; i <= peak_places; ++i) peak = std::max(peak, pair_response(echo, curve, gap, place_of(i, gap)));
+    return dip_under(peak, middle);
+}
+
+bool pair_parts(const EchoPulse& echo, const EchoCurve& curve, double gap) {
+    const double middle = pair_response(echo, curve, gap, 0.0);
+    // From over the target outwards, then from there inwards: the peak mostly stands there.
+    constexpr int over_target = 10;
+    for (int k = 0; k < peak_places; ++k) {
+        const int i = over_target + k <= peak_places ? over_target + k : peak_places - k;
+        if (dip_under(pair_response(echo, curve, gap, place_of(i, gap)), middle) >= apart_dip) return true;
+    }
+    return false;
 }
 
 Value smallest_gap(const Case& c, double radius) {
@@ -75,17 +92,17 @@ Value smallest_gap(const Case& c, double radius) {
         offset_where([&](double x) { return echo_time(c, x, radius) - apex; }, 0.9 * echo.width, 0.5 * start);
     double far = 2.0 * half;
     const EchoCurve curve(c, radius, 1.5 * far);
-    if (!(pair_dip(echo, curve, far) >= apart_dip)) return {far, Issue::no_solution};
+    if (!(pair_parts(echo, curve, far))) return {far, Issue::no_solution};
     // Down from there to the first gap that fails, so that a dip by chance at a small gap does not count.
     double near = far;
     for (int i = 0; i < 80; ++i) {
         near = 0.95 * far;
-        if (!(pair_dip(echo, curve, near) >= apart_dip)) break;
+        if (!(pair_parts(echo, curve, near))) break;
         far = near;
     }
     for (int i = 0; i < 7; ++i) {
         const double mid = 0.5 * (near + far);
-        (pair_dip(echo, curve, mid) >= apart_dip ? far : near) = mid;
+        (pair_parts(echo, curve, mid) ? far : near) = mid;
     }
     return finite(std::max(far, 2.0 * radius));
 }
@@ -127,9 +144,7 @@ void add_sideways(const Setting& setting, Answers& answers) {
     const Case& c = setting.likely();
     const double f = setting.frequency(), R = setting.radius(), gap = setting.plan.target.gap;
     Answer& a = add(answers, Group::sideways, "apart.sideways", "Told apart sideways", Quantity::length,
-                    spread_over(setting.cases, [&](const Case& k) { return smallest_gap(k, R).value; }));
-
-    if (const Value least = smallest_gap(c, R); !least.ok()) a.likely.issue = least.issue;
+                    spread_over(setting.cases, [&](const Case& k) { return smallest_gap(k, R); }));
     PairPicture& pair = answers.pair;
     const double half = 0.5 * gap + std::max(0.75 * gap, a.likely.value);
     const EchoCurve curve(c, R, half + 0.5 * gap);

@@ -35,6 +35,8 @@ double pair_response(const EchoPulse& echo, const EchoCurve& curve, double gap, 
 
 /// Dip at the middle, 0 to 1 of the peak.
 double pair_dip(const EchoPulse& echo, const EchoCurve& curve, double gap);
+/// Whether that dip is at least `apart_dip`; quicker, because the first peak high enough tells.
+bool pair_parts(const EchoPulse& echo, const EchoCurve& curve, double gap);
 
 /// Smallest distance centre to centre from which the dip stays at or above `apart_dip`, m; no less than the targets'
 /// own diameter, at which they touch.

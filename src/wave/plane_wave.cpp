@@ -13,6 +13,14 @@ Complex normal(Complex eps, Complex s2) {
     return q.imag() > 0.0 && argument.real() <= 0.0 ? -q : q;
 }
 
+/// sqrt(eps) with a positive real part, eps' > 0: the library's root guards against more and takes three times as long.
+Complex refractive_index(Complex eps) {
+    const double square = std::norm(eps);
+    if (!(square < 1e300)) return std::sqrt(eps);
+    const double n = std::sqrt(0.5 * (eps.real() + std::sqrt(square)));
+    return {n, 0.5 * eps.imag() / n};
+}
+
 Complex quotient(Complex a, Complex b) {
     const Complex r = a / b;
     return std::isfinite(r.real()) && std::isfinite(r.imag()) ? r : Complex{};
@@ -34,7 +42,7 @@ PlaneWave plane_wave(Permittivity permittivity, double frequency) {
         wave.issue = worse(wave.issue, std::isfinite(frequency) ? Issue::out_of_range : Issue::not_a_number);
         return wave;
     }
-    const Complex n = std::sqrt(permittivity.value);
+    const Complex n = refractive_index(permittivity.value);
     const double w = 2.0 * pi * frequency, k0 = w / speed_of_light;
     wave.wavenumber = k0 * n;
     wave.speed = speed_of_light / n.real();
@@ -43,6 +51,10 @@ PlaneWave plane_wave(Permittivity permittivity, double frequency) {
     wave.skin_depth = wave.attenuation > 1e-9 ? 1.0 / wave.attenuation : 1e9;
     wave.impedance = vacuum_impedance / n;
     return wave;
+}
+
+Complex wavenumber(const Material& material, double frequency) {
+    return 2.0 * pi * frequency / speed_of_light * refractive_index(permittivity(material, frequency).value);
 }
 
 double low_loss_attenuation_db(double conductivity, double permittivity) {

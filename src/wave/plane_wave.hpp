@@ -20,6 +20,9 @@ struct PlaneWave {
 PlaneWave plane_wave(const Material& material, double frequency);
 PlaneWave plane_wave(Permittivity permittivity, double frequency);
 
+/// Its wavenumber alone, for many frequencies.  @param frequency  Hz, > 0 and finite
+Complex wavenumber(const Material& material, double frequency);
+
 /// The named comparison, not used elsewhere: 1636.12 sigma / sqrt(eps') dB/m, sigma in S/m.
 double low_loss_attenuation_db(double conductivity, double permittivity);
 

@@ -28,11 +28,11 @@ constexpr double ten_db = 1.1512925464970229;  // ln(10) / 2, Np
 
 Band edges(double order, double drop) { return unit_edges(2.0 * drop / order); }
 
-double log_spectrum(double order, double x) { return order * (std::log(x) + 0.5 * (1.0 - x * x)); }
-
 bool legal(const PulseShape& shape) { return shape.centre_frequency >= 1e3 && shape.centre_frequency <= 1e13; }
 
 }  // namespace
+
+double log_spectrum(double order, double ratio) { return order * (std::log(ratio) + 0.5 * (1.0 - ratio * ratio)); }
 
 double order_of(const PulseShape& shape) {
     if (shape.family == PulseFamily::ricker || !std::isfinite(shape.bandwidth)) return 2.0;

@@ -31,6 +31,9 @@ Band band_of(const PulseShape& shape, double drop_db = 10.0);
 
 /// Amplitude spectrum at `frequency`, peak 1.
 double spectrum_at(const PulseShape& shape, double frequency);
+/// Logarithm (Np, <= 0) of the amplitude spectrum of an order at `ratio` (> 0) of the peak frequency: for many
+/// frequencies quicker than spectrum_at(), which finds the order afresh.
+double log_spectrum(double order, double ratio);
 
 /// A real signal sampled evenly: value[i] at start + i * step.
 struct Signal {

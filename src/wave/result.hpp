@@ -34,6 +34,7 @@ struct Value {
 inline Value finite(double x, Issue issue = Issue::none) {
     return std::isfinite(x) ? Value{x, issue} : Value{0.0, Issue::not_a_number};
 }
+inline Value finite(Value v) { return finite(v.value, v.issue); }
 
 /// An input that is not known exactly: low <= likely <= high, same unit.
 struct Range {

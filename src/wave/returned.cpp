@@ -42,7 +42,7 @@ class Path {
         Complex sum{};
         for (const Leg& leg : legs_) sum += std::sqrt(permittivity(*leg.material, f).value) * leg.length;
         const Complex phase = 4.0 * pi * f / speed_of_light * sum;
-        return {order_ * (std::log(x) + 0.5 * (1.0 - x * x)) + fade(x) + phase.imag(), phase.real()};
+        return {log_spectrum(order_, x) + fade(x) + phase.imag(), phase.real()};
     }
     Issue issue() const {
         Issue worst = Issue::none;

@@ -33,7 +33,7 @@ void parts_of(const Plan& given) {
     const Case& c = cases.likely();
     std::printf("  (%zu grounds and depths)\n", cases.all.size());
     time_it("cases", [&] { cases_of(sane.plan); });
-    time_it("one echo", [&] { EchoPulse(*c.ground->spectrum, c.ground->stack, c.depth, c.height); });
+    time_it("one echo", [&] { EchoPulse(c.ground->spectrum, c.ground->stack, c.depth, c.height); });
     time_it("one lit patch", [&] { lit_patch(c.path, c.separation, setting.frequency()); });
     time_it("one smallest gap", [&] { smallest_gap(c, setting.radius()); });
     const auto part = [&](const char* name, auto f) {

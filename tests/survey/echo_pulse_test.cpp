@@ -61,3 +61,34 @@ TEST_CASE("an echo that has lost 3000 dB still has its shape") {
     CHECK(std::isfinite(e.width));
     CHECK(e.envelope(0.0) == doctest::Approx(1.0));
 }
+
+TEST_CASE("the upright part is the real part of the echo, and nothing outside the record") {
+    const Cases cases = cases_of(three_layers());
+    const EchoPulse& e = cases.likely().echo;
+    double most = 0.0;
+    for (double t = -1.2 * e.reach; t < 1.2 * e.reach; t += 0.01 * e.reach) {
+        CHECK(e.upright(t) == e.at(t).real());
+        most = std::max(most, e.upright(t));
+    }
+    CHECK(most > 0.9);
+    CHECK(e.upright(2.0 * e.reach) == 0.0);
+    CHECK(EchoPulse().upright(0.0) == 0.0);
+}
+
+TEST_CASE("grounds that have a layer in common share its wavenumbers, those of its material") {
+    const Cases cases = cases_of(three_layers());
+    REQUIRE(cases.grounds.size() == 5);
+    int shared = 0;
+    for (const auto& ground : cases.grounds) {
+        CHECK(ground->spectrum.sent == cases.grounds[0]->spectrum.sent);
+        for (std::size_t i = 0; i < ground->stack.slabs.size(); ++i) {
+            const Material& material = ground->stack.slabs[i].material;
+            const double f = ground->spectrum.sent->frequency(20);
+            CHECK((*ground->spectrum.layers[i])[20] == wavenumber(material, f));
+            const bool same = ground->spectrum.layers[i] == cases.grounds[0]->spectrum.layers[i];
+            CHECK(same == (material == cases.grounds[0]->stack.slabs[i].material));
+            shared += same;
+        }
+    }
+    CHECK(shared > 3);
+}

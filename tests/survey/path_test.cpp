@@ -85,3 +85,30 @@ TEST_CASE("the tabled curve keeps to the exact times between its points") {
         CHECK(curve.later(-x) == curve.later(x));
     }
 }
+
+TEST_CASE("a leg is the same wherever its search starts") {
+    const Cases cases = cases_of(three_layers());
+    const Path& path = cases.likely().path;
+    for (double offset : {0.0, 0.1, 2.0, 50.0}) {
+        const Leg leg = leg_to(path, offset);
+        for (double near : {0.1 * leg.tangent, leg.tangent, 1.1 * leg.tangent + 0.01, 100.0}) {
+            const Leg other = leg_to(path, offset, near);
+            CHECK(other.time == doctest::Approx(leg.time).epsilon(1e-12));
+            CHECK(other.angle == doctest::Approx(leg.angle).epsilon(1e-6));
+        }
+    }
+}
+
+TEST_CASE("the offset where a delay is reached is found in few looks") {
+    for (double start : {0.01, 0.3, 5.0}) {
+        int looks = 0;
+        const auto later = [&](double x) {
+            ++looks;
+            return std::sqrt(1.0 + x * x) - 1.0 + 0.1 * x * x * x;
+        };
+        const double goal = 0.25, x = offset_where(later, goal, start);
+        CHECK(later(x) == doctest::Approx(goal).epsilon(1e-8));
+        // Doubling from 0.01 takes seven of them; a search that stalls would take twenty more.
+        CHECK(looks < 20);
+    }
+}

@@ -44,6 +44,27 @@ TEST_CASE("six samples a period rebuild the Ricker wavelet to a thousandth, two 
     CHECK(error_at(4.0).band_limited > error_at(6.0).band_limited);
 }
 
+TEST_CASE("samples so fine that they fall on the places looked at rebuild the pulse, too") {
+    for (double n : {60.0, 100.0, 1000.0}) CHECK(error_at(n).band_limited < 1e-3);
+}
+
+TEST_CASE("a sum of sinc functions passes through the samples and is a cosine between those of one") {
+    std::vector<double> wave(401);
+    for (int n = 0; n <= 400; ++n) wave[n] = std::cos(0.7 * (n - 200)) * std::exp(-1e-3 * (n - 200) * (n - 200));
+    for (double place : {200.0, 197.0, 203.0 - 1e-12, 203.0 + 1e-12}) {
+        CHECK(sinc_sum(wave, place) == wave[static_cast<std::size_t>(std::round(place))]);
+    }
+    for (double place : {200.5, 197.3, 210.0 + 1e-6}) {
+        const double t = place - 200.0;
+        CHECK(sinc_sum(wave, place) == doctest::Approx(std::cos(0.7 * t) * std::exp(-1e-3 * t * t)).epsilon(1e-9));
+    }
+    const std::vector<double> even{0.5, 1.0};
+    CHECK(sinc_sum(even, 0.5) == doctest::Approx(1.5 * 2.0 / pi));
+    CHECK(sinc_sum(even, -1.0) == 0.0);
+    CHECK(sinc_sum(even, 2.0) == 0.0);
+    CHECK(sinc_sum({}, 0.5) == 0.0);
+}
+
 // A chord over dt misses a crest of curvature 6 (pi fp)^2 by at most dt^2/8 of it: 1 - 6 (pi fp t)^2 near the top.
 TEST_CASE("joined dots miss the crest by what its curvature says") {
     for (double n : {12.0, 24.0, 32.0}) {

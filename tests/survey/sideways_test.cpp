@@ -40,6 +40,20 @@ TEST_CASE("at the smallest gap the dip is Rayleigh's, and every wider gap keeps 
     }
 }
 
+TEST_CASE("two part just where their dip is deep enough") {
+    const Cases cases = cases_of(three_layers());
+    const Case& c = cases.likely();
+    const EchoCurve curve(c, 0.05, 2.0);
+    int apart = 0;
+    for (double gap = 0.02; gap < 1.2; gap += 0.01) {
+        const bool parts = pair_parts(c.echo, curve, gap);
+        CHECK(parts == (pair_dip(c.echo, curve, gap) >= apart_dip));
+        apart += parts;
+    }
+    CHECK(apart > 10);
+    CHECK(apart < 110);
+}
+
 TEST_CASE("deeper targets need more room, higher frequencies less, and it goes with the root of both") {
     const auto gap = [](double depth, double frequency) {
         const Cases cases = cases_of(one_layer(1e8, depth, 1e-3, frequency));

@@ -57,6 +57,20 @@ TEST_CASE("a wave's numbers hang together") {
     CHECK(std::isfinite(plane_wave(air(), std::nan("")).wavelength));
 }
 
+TEST_CASE("the wavenumber alone is that of the plane wave, with and without loss") {
+    for (const double sigma : {0.0, 1e-9, 0.03, 10.0}) {
+        for (const double f : {1e3, 4e8, 1e13}) {
+            const Material material = constant_material(16.0, sigma);
+            const Complex eps = permittivity(material, f).value, exact = 2.0 * pi * f / speed_of_light * std::sqrt(eps);
+            CHECK(std::abs(wavenumber(material, f) - exact) < 1e-14 * std::abs(exact));
+            CHECK(wavenumber(material, f) == plane_wave(material, f).wavenumber);
+        }
+    }
+    // Loss beyond what its square can be written in.
+    const Complex much = plane_wave(Permittivity{{1.0, -1e200}, Issue::none}, 1e6).wavenumber;
+    CHECK(std::abs(much.imag() / much.real() + 1.0) < 1e-12);
+}
+
 TEST_CASE("Fresnel coefficients of the textbook table") {
     const auto rows = reference_table("fresnel");
     REQUIRE(rows.size() == 9);

@@ -92,6 +92,11 @@ TEST_CASE("the order found from a bandwidth gives that bandwidth back; 1.33690 i
     CHECK(order_of(gaussian(std::nan(""))) == 2.0);
     CHECK(spectrum_at(ricker(), fp) == doctest::Approx(1.0));
     CHECK(spectrum_at(ricker(), 0.0) == 0.0);
+    for (const double ratio : {0.1, 0.7, 1.0, 2.5}) {
+        const PulseShape shape = gaussian(0.8);
+        const double level = log_spectrum(order_of(shape), ratio);
+        CHECK(std::exp(level) == doctest::Approx(spectrum_at(shape, ratio * shape.centre_frequency)).epsilon(1e-12));
+    }
 }
 
 TEST_CASE("the sent Ricker pulse is the formula (1 - 2u) exp(-u)") {
