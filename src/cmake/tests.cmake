@@ -28,6 +28,10 @@ target_link_libraries(bench_native PRIVATE gg_paper)
 add_executable(bench_section EXCLUDE_FROM_ALL ${CMAKE_SOURCE_DIR}/tests/bench/section.cpp)
 target_link_libraries(bench_section PRIVATE gg_echo)
 target_compile_definitions(bench_section PRIVATE GG_SOURCE_DIR="${CMAKE_SOURCE_DIR}")
+if(EMSCRIPTEN)  # for tests/bench/section.mjs
+  target_link_options(bench_section PRIVATE -sENVIRONMENT=web -sSINGLE_FILE=1 -sALLOW_MEMORY_GROWTH=1 -sEXIT_RUNTIME=1
+    -sTOTAL_STACK=1MB)
+endif()
 if(TARGET gg_ui)
   add_executable(bench_frames EXCLUDE_FROM_ALL ${CMAKE_SOURCE_DIR}/tests/bench/frames.cpp)
   target_link_libraries(bench_frames PRIVATE gg_ui)
