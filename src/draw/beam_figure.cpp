@@ -21,18 +21,11 @@ struct Cut {
     double half_width() const { return 0.5 * plot.width / scale; }
 };
 
-struct Beam {
-    Canvas& canvas;
-    const Plan& plan;
-    const Answers& answers;
-    const FigureStyle& style;
-    const Palette& colours;
+struct Beam : Sketch {
+    using Sketch::Sketch;
     Cut cut;
-    double depth, size;  ///< m: target's top and diameter
-    Labels labels;
-    Figure figure;
+    double depth = std::max(0.0, plan.target.depth.likely), size = std::max(0.0, plan.target.size);  ///< m, of the top
 
-    std::string length(double x) const { return say(x, Quantity::length, style.units); }
     bool flat() const { return plan.target.shape == TargetShape::flat; }
     int count() const { return flat() ? 1 : std::clamp(plan.target.count, 1, 12); }
 };
@@ -161,7 +154,7 @@ void draw_depth_axis(Beam& b) {
     const Cut& cut = b.cut;
     const AxisUnit unit = length_axis(cut.depth_shown(), b.style.units);
     const double x = cut.plot.x, room = 2.6 * b.style.text;
-    const TextStyle words{b.colours.soft_ink, 0.85 * b.style.text, Across::right, Down::middle};
+    const TextStyle words{b.colours.soft_ink, b.small(), Across::right, Down::middle};
     for (const double t : ticks(0, cut.depth_shown() / unit.metres,
                                 std::max(1, static_cast<int>(cut.depth_shown() * cut.scale / room)))) {
         const double y = cut.at(0, t * unit.metres).y;
@@ -196,7 +189,7 @@ void draw_wavelength(Beam& b) {
     // Pulled out to the left the wave grows longer, so the frequency falls as 1 / length.
     b.figure.handles.push_back(
         {"antenna.frequency", "Centre frequency", grip, Handle::Way::across, f, f / px, {}, 1e6, true, 0.0});
-    const TextStyle words{b.colours.wave, 0.85 * b.style.text, Across::right, Down::top, true};
+    const TextStyle words{b.colours.wave, b.small(), Across::right, Down::top, true};
     b.labels.put({{right, y + swing + 5}, {right, y + swing + 5 + 1.3 * b.style.text}},
                  "wavelength " + b.length(wavelength), words);
 }
@@ -284,7 +277,7 @@ void add_boundary_handles(Beam& b) {
 }
 
 void label_layers(Beam& b) {
-    const double size = 0.85 * b.style.text;
+    const double size = b.small();
     double top = 0.0;
     for (std::size_t i = 0; i < b.plan.ground.size() && i < 8; ++i) {
         const bool last = i + 1 == b.plan.ground.size();
@@ -320,21 +313,11 @@ std::string description_of(const Beam& b) {
 
 Figure beam_figure(Canvas& canvas, const Plan& plan, const Answers& answers, const FigureStyle& style) {
     if (!drawable_box(style.box) || plan.ground.empty()) return {{}, "No ground to draw."};
-    const Palette& colours = palette(style.dark);
-    const Cut cut = make_cut(plan, answers, style);
-    Beam b{canvas,
-           plan,
-           answers,
-           style,
-           colours,
-           cut,
-           std::max(0.0, plan.target.depth.likely),
-           std::max(0.0, plan.target.size),
-           Labels(canvas, colours, style.box),
-           {}};
+    Beam b(canvas, plan, answers, style);
+    b.cut = make_cut(plan, answers, style);
+    const Cut& cut = b.cut;
     if (!(cut.scale > 0)) return {{}, "Nothing to draw."};
-    canvas.push_clip(style.box);
-    canvas.box(style.box, colours.paper);
+    b.begin();
     canvas.push_clip(cut.plot);
     draw_ground(b);
     draw_wave(b);
@@ -346,17 +329,13 @@ Figure beam_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     draw_wavelength(b);
     draw_patch(b);
     label_depth(b);
-    draw_scale_bar(canvas, b.labels, {cut.plot.x + 12, cut.plot.bottom() - 12}, std::min(140.0, 0.3 * cut.plot.width),
-                   cut.scale, colours, style);
+    draw_scale_bar(b, {cut.plot.x + 12, cut.plot.bottom() - 12}, std::min(140.0, 0.3 * cut.plot.width), cut.scale);
     const double words_y = cut.at(0, plan.target.depth.likely + plan.target.size).y + 44;
     b.labels.put({{cut.middle + 18, words_y - 22}, {cut.middle, words_y}, {cut.middle + 18, words_y + 4}},
-                 target_words(plan.target, style.units), {colours.ink, 0.85 * style.text, Across::left, Down::middle});
+                 target_words(plan.target, style.units), {b.colours.ink, b.small(), Across::left, Down::middle});
     label_layers(b);
     draw_depth_axis(b);
-    b.figure.description = description_of(b);
-    finish_handles(canvas, colours, b.figure, style);
-    canvas.pop_clip();
-    return b.figure;
+    return b.finish(description_of(b));
 }
 
 }  // namespace gg

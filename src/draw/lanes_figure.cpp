@@ -14,17 +14,10 @@ struct Map {
     Point at(SitePoint s) const { return {origin.x + s.x * scale, origin.y - s.y * scale}; }
 };
 
-struct Site {
-    Canvas& canvas;
-    const Plan& plan;
-    const Answers& answers;
-    const FigureStyle& style;
-    const Palette& colours;
-    Labels labels;
+struct Site : Sketch {
+    using Sketch::Sketch;
     Map map;
     Box plot;
-    Figure figure;
-    double small() const { return 0.85 * style.text; }
 };
 
 bool make_map(Site& s) {
@@ -147,8 +140,7 @@ void add_spacing_handle(Site& s) {
                                 false,
                                 0.0});
     s.labels.keep_round(b, grip_radius + 2);
-    const std::string words =
-        (n > 1 ? tick_words(n) + " spacings of " : "spacing ") + say(spacing, Quantity::length, s.style.units);
+    const std::string words = (n > 1 ? tick_words(n) + " spacings of " : "spacing ") + s.length(spacing);
     s.labels.put({{b.x + grip_radius + 6, b.y}, {0.5 * (a.x + b.x), b.y - grip_radius - 4}}, words,
                  {s.colours.wave, s.small(), Across::left, Down::middle, true});
 }
@@ -184,7 +176,7 @@ std::string sentence_of(const Site& s) {
     std::string words = std::to_string(s.answers.lanes.lines.size()) + " lines, " + std::to_string(hits) +
                         (hits == 1 ? " hit" : " hits");
     const double between = answer_or(s.answers, "lanes.between_hits", 0.0);
-    if (hits > 1 && between > 0) words += ", one every " + say(between, Quantity::length, s.style.units);
+    if (hits > 1 && between > 0) words += ", one every " + s.length(between);
     return words;
 }
 
@@ -192,33 +184,27 @@ std::string sentence_of(const Site& s) {
 
 Figure lanes_figure(Canvas& canvas, const Plan& plan, const Answers& answers, const FigureStyle& style) {
     if (!drawable_box(style.box)) return {{}, "No room to draw."};
-    const Palette& colours = palette(style.dark);
     const double head = 1.9 * style.text, pad = 22;
-    Site s{canvas, plan, answers, style, colours, Labels(canvas, colours, style.box), {}, {}, {}};
+    Site s(canvas, plan, answers, style);
     s.plot = {style.box.x + pad, style.box.y + head + 8, style.box.width - 2 * pad,
               style.box.height - head - 3.4 * style.text};
     if (!(s.plot.width > 8 && s.plot.height > 8) || !make_map(s)) return {{}, "No site to draw."};
-    canvas.push_clip(style.box);
-    canvas.box(style.box, colours.paper);
+    s.begin();
     std::vector<Point> outline;
     for (const SitePoint& p : plan.lanes.outline) outline.push_back(s.map.at(p));
-    canvas.area(outline, colours.panel);
+    canvas.area(outline, s.colours.panel);
     draw_lines(s);
-    canvas.line(outline, {colours.ink, 2}, true);
+    canvas.line(outline, {s.colours.ink, 2}, true);
     draw_target(s);
     draw_north(s);
     s.labels.put({{style.box.x + 10, style.box.y + 0.55 * head}}, sentence_of(s),
-                 {colours.ink, style.text, Across::left, Down::middle, true}, false);
+                 {s.colours.ink, style.text, Across::left, Down::middle, true}, false);
     draw_legend(s);
     add_bearing_handle(s);
     add_spacing_handle(s);
-    draw_scale_bar(canvas, s.labels, {style.box.x + 12, style.box.bottom() - 10}, std::min(140.0, 0.4 * s.plot.width),
-                   s.map.scale, colours, style);
-    s.figure.description = sentence_of(s) + "; " + say(answers.lanes.distance, Quantity::length, style.units) +
-                           " walked, lines " + say(plan.lanes.spacing, Quantity::length, style.units) + " apart.";
-    finish_handles(canvas, colours, s.figure, style);
-    canvas.pop_clip();
-    return s.figure;
+    draw_scale_bar(s, {style.box.x + 12, style.box.bottom() - 10}, std::min(140.0, 0.4 * s.plot.width), s.map.scale);
+    return s.finish(sentence_of(s) + "; " + s.length(answers.lanes.distance) + " walked, lines " +
+                    s.length(plan.lanes.spacing) + " apart.");
 }
 
 }  // namespace gg

@@ -13,13 +13,8 @@ namespace {
 
 constexpr double shade_height = 10.0;  // css px
 
-struct Pair {
-    Canvas& canvas;
-    const Plan& plan;
-    const Answers& answers;
-    const FigureStyle& style;
-    const Palette& colours;
-    Labels labels;
+struct Pair : Sketch {
+    using Sketch::Sketch;
     Box curve, panel, ground;           ///< from the top: strength along the line, travel times, targets to scale
     double from = 0.0, to = 1.0;        ///< m along the line
     double first = 0.0, last = 1.0;     ///< s, of the panel
@@ -27,12 +22,10 @@ struct Pair {
     const PairSection* seen = nullptr;  ///< the section, where there is one to show
     Box image{};                        ///< the focused picture beside the panel; no width: not beside it
     bool by_depth = false;              ///< the panel itself shows the focused picture: first and last are m of depth
-    Figure figure{};
 
     double x(double position) const { return panel.x + (position - from) / (to - from) * panel.width; }
     double y(double time) const { return panel.y + (time - first) / (last - first) * panel.height; }
     double scale() const { return panel.width / (to - from); }
-    double small() const { return 0.85 * style.text; }
     PairWords words() const { return {plan, answers, seen, style.units}; }
     double middle() const { return answers.pair.first + 0.5 * plan.target.gap; }
     /// The panel, and the picture beside it, in the section's own places along the line.
@@ -265,7 +258,7 @@ void draw_ground(Pair& p) {
                                 false,
                                 0.0});
     p.labels.keep_round(grip, grip_radius + 2);
-    const std::string words = "gap " + say(p.plan.target.gap, Quantity::length, p.style.units);
+    const std::string words = "gap " + p.length(p.plan.target.gap);
     p.labels.put({{0.5 * (left + right), y}, {p.ground.x + 8 + 4 * p.small(), y}}, words,
                  {p.colours.wave, p.small(), Across::centre, Down::middle, true});
 }
@@ -280,7 +273,7 @@ void add_depth_handle(Pair& p) {
     p.figure.handles.push_back(
         {"target.depth", "Depth to top", grip, Handle::Way::down, depth, per_px, {}, 0.01, false, 0.0});
     p.labels.keep_round(grip, grip_radius + 2);
-    p.labels.put({{grip.x + grip_radius + 8, grip.y - 3}}, say(depth, Quantity::length, p.style.units) + " deep",
+    p.labels.put({{grip.x + grip_radius + 8, grip.y - 3}}, p.length(depth) + " deep",
                  {p.colours.wave, p.small(), Across::left, Down::bottom, true});
 }
 
@@ -346,8 +339,7 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     const PairPicture& pair = answers.pair;
     if (!drawable_box(style.box)) return {{}, "No room to draw."};
     if (pair.positions.size() < 2 || !(pair.positions.back() > pair.positions.front())) return {{}, "No pair to draw."};
-    const Palette& colours = palette(style.dark);
-    Pair p{canvas, plan, answers, style, colours, Labels(canvas, colours, style.box), {}, {}, {}};
+    Pair p(canvas, plan, answers, style);
     if (style.section && style.section->section.ok() && style.section->scene.targets.size() > 1) p.seen = style.section;
     lay_out(p);
     const double apex = std::min(least_of(pair.arrival_left), least_of(pair.arrival_right));
@@ -362,8 +354,7 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     }
     if (!(p.panel.width > 8 && p.panel.height > 8)) return {{}, "No room to draw."};
 
-    canvas.push_clip(style.box);
-    canvas.box(style.box, colours.paper);
+    p.begin();
     draw_verdict(p, 2.5 * style.text);
     if (!p.seen) {
         draw_strength(p);
@@ -376,10 +367,7 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
     if (p.seen)
         draw_captions(
             p, {style.box.x, p.ground.bottom() + 4, style.box.width, style.box.bottom() - p.ground.bottom() - 4});
-    p.figure.description = p.words().description();
-    finish_handles(canvas, colours, p.figure, style);
-    canvas.pop_clip();
-    return p.figure;
+    return p.finish(p.words().description());
 }
 
 }  // namespace gg

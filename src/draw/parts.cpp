@@ -60,12 +60,21 @@ void draw_grip(Canvas& canvas, const Palette& colours, const Handle& handle, boo
     }
 }
 
-void finish_handles(Canvas& canvas, const Palette& colours, Figure& figure, const FigureStyle& style) {
+void Sketch::begin() {
+    canvas.push_clip(style.box);
+    canvas.box(style.box, colours.paper);
+}
+
+Figure Sketch::finish(std::string description) {
     std::erase_if(figure.handles, [&](const Handle& h) {
         return !(style.box.holds(h.at) && std::isfinite(h.start) && std::isfinite(h.per_px));
     });
-    if (!style.handles) return;
-    for (const Handle& handle : figure.handles) draw_grip(canvas, colours, handle, handle.field == style.held);
+    for (const Handle& handle : figure.handles) {
+        if (style.handles) draw_grip(canvas, colours, handle, handle.field == style.held);
+    }
+    canvas.pop_clip();
+    figure.description = std::move(description);
+    return std::move(figure);
 }
 
 Point inside(Point p, Box box, double margin) {
@@ -126,23 +135,22 @@ std::string tick_words(double value) {
     return words;
 }
 
-void draw_scale_bar(Canvas& canvas, Labels& labels, Point at, double most, double px_per_metre, const Palette& colours,
-                    const FigureStyle& style) {
+void draw_scale_bar(Sketch& s, Point at, double most, double px_per_metre) {
     if (!(px_per_metre > 0) || !(most > 20)) return;
-    const AxisUnit unit = length_axis(most / px_per_metre, style.units);
+    const AxisUnit unit = length_axis(most / px_per_metre, s.style.units);
     const double px = px_per_metre * unit.metres;
     double length = nice_step(most / px);
     while (length * px > most && length > 1e-9) length = nice_step(length / 2.5);
     const double width = length * px;
-    const TextStyle words{colours.ink, 0.85 * style.text, Across::left, Down::bottom, false};
+    const TextStyle words{s.colours.ink, s.small(), Across::left, Down::bottom, false};
     const Box plate{at.x - 5, at.y - 1.25 * words.size - 9, width + 10, 1.25 * words.size + 14};
-    if (!labels.put({{at.x, at.y - 8}}, tick_words(length) + " " + unit.name, words)) return;
-    canvas.box({plate.x, at.y - 7, plate.width, 11}, colours.paper.with_alpha(0.82), 3);
-    canvas.box({at.x, at.y - 4, width / 2, 5}, colours.ink);
-    canvas.box({at.x + width / 2, at.y - 4, width / 2, 5}, colours.paper);
+    if (!s.labels.put({{at.x, at.y - 8}}, tick_words(length) + " " + unit.name, words)) return;
+    s.canvas.box({plate.x, at.y - 7, plate.width, 11}, s.colours.paper.with_alpha(0.82), 3);
+    s.canvas.box({at.x, at.y - 4, width / 2, 5}, s.colours.ink);
+    s.canvas.box({at.x + width / 2, at.y - 4, width / 2, 5}, s.colours.paper);
     const auto edge = points({{at.x, at.y - 4}, {at.x + width, at.y - 4}, {at.x + width, at.y + 1}, {at.x, at.y + 1}});
-    canvas.line(edge, {colours.ink, 1}, true);
-    labels.keep(plate);
+    s.canvas.line(edge, {s.colours.ink, 1}, true);
+    s.labels.keep(plate);
 }
 
 void draw_dimension(Canvas& canvas, Point from, Point to, Stroke stroke) {
@@ -164,14 +172,9 @@ void draw_arrowhead(Canvas& canvas, Point tip, Point direction, double size, Col
                 colour);
 }
 
-TextStyle normal_text(const FigureStyle& style, const Palette& colours) { return {colours.ink, style.text}; }
-TextStyle small_text(const FigureStyle& style, const Palette& colours) { return {colours.soft_ink, 0.85 * style.text}; }
-
 double answer_or(const Answers& answers, std::string_view key, double otherwise) {
-    const auto found =
-        std::find_if(answers.list.begin(), answers.list.end(), [&](const Answer& a) { return a.key == key; });
-    return found != answers.list.end() && found->likely.ok() && std::isfinite(found->likely.value) ? found->likely.value
-                                                                                                   : otherwise;
+    const Answer* found = answers.find(key);
+    return found && found->likely.ok() && std::isfinite(found->likely.value) ? found->likely.value : otherwise;
 }
 
 void draw_round(Canvas& canvas, const Palette& colours, Point centre, double radius, Filling filling) {

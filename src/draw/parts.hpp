@@ -30,14 +30,37 @@ class Labels {
     std::vector<Box> taken_;
 };
 
+/// A picture being drawn: what each figure reads, draws with and gives back. The figures add what is their own.
+struct Sketch {
+    Canvas& canvas;
+    const Plan& plan;
+    const Answers& answers;
+    const FigureStyle& style;
+    const Palette& colours;
+    Labels labels;
+    Figure figure;
+
+    Sketch(Canvas& on, const Plan& of, const Answers& with, const FigureStyle& look)
+        : canvas(on),
+          plan(of),
+          answers(with),
+          style(look),
+          colours(palette(look.dark)),
+          labels(on, colours, look.box) {}
+    double small() const { return 0.85 * style.text; }
+    std::string length(double metres) const { return say(metres, Quantity::length, style.units); }
+
+    /// The first thing a figure does: paper in its box, and nothing drawn outside.
+    void begin();
+    /// The last thing: leaves out handles that are not numbers or not in the picture, as a plan that makes no sense may
+    /// give, draws the grips of the others when the style wants them, and gives the figure with its description.
+    Figure finish(std::string description);
+};
+
 constexpr double grip_radius = 12.0;  ///< css px
 
 /// The sign of a thing that can be dragged: an accent disc with chevrons the way it goes; stronger while held.
 void draw_grip(Canvas& canvas, const Palette& colours, const Handle& handle, bool held);
-/// The last thing a picture does: leaves out handles that are not numbers or not in the picture, as a plan that makes
-/// no sense may give, and draws the grips of the others when the style wants them.
-void finish_handles(Canvas& canvas, const Palette& colours, Figure& figure, const FigureStyle& style);
-
 /// A few points in place, for Canvas::line and area.
 template <std::size_t N>
 std::array<Point, N> points(const Point (&list)[N]) {
@@ -65,8 +88,7 @@ AxisUnit length_axis(double extent, UnitSystem units);
 std::string tick_words(double value);
 
 /// Bar of a round length with its words above it, lower left corner at `at`, at most `most` px long.
-void draw_scale_bar(Canvas& canvas, Labels& labels, Point at, double most, double px_per_metre, const Palette& colours,
-                    const FigureStyle& style);
+void draw_scale_bar(Sketch& sketch, Point at, double most, double px_per_metre);
 /// A line with short bars across its ends.
 void draw_dimension(Canvas& canvas, Point from, Point to, Stroke stroke);
 /// Small filled triangle with its tip at `tip`, pointing along `direction` (any length).

@@ -20,16 +20,9 @@ struct Axis {
     double px_per_second() const { return box.width / (to - from); }
 };
 
-struct Pulse {
-    Canvas& canvas;
-    const Plan& plan;
-    const Answers& answers;
-    const FigureStyle& style;
-    const Palette& colours;
-    Labels labels;
+struct Pulse : Sketch {
+    using Sketch::Sketch;
     Axis zoom, all;
-    Figure figure;
-    double small() const { return 0.85 * style.text; }
 };
 
 bool usable(const Signal& s) {
@@ -217,8 +210,7 @@ void draw_overview(Pulse& p) {
     // The words leave the pulse free.
     p.labels.keep({a, box.y, z - a, box.height});
     const std::string time = nanoseconds(p.plan.pass.window, p.style.units);
-    const std::string depth =
-        pulse.window_depth > 0 ? ", to " + say(pulse.window_depth, Quantity::length, p.style.units) : "";
+    const std::string depth = pulse.window_depth > 0 ? ", to " + p.length(pulse.window_depth) : "";
     const TextStyle right{p.colours.wave, p.small(), Across::right, Down::middle, true};
     TextStyle left = right;
     left.across = Across::left;
@@ -289,10 +281,9 @@ Figure pulse_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     const PulsePicture& pulse = answers.pulse;
     if (!drawable_box(style.box)) return {{}, "No room to draw."};
     if (!usable(pulse.returned) || !(plan.pass.window > 0)) return {{}, "No pulse to draw."};
-    const Palette& colours = palette(style.dark);
-    Pulse p{canvas, plan, answers, style, colours, Labels(canvas, colours, style.box), {}, {}, {}};
+    Pulse p(canvas, plan, answers, style);
     const Box& box = style.box;
-    const double small = 0.85 * style.text, axis = 1.7 * small, pad = 10;
+    const double small = p.small(), axis = 1.7 * small, pad = 10;
     const double head = std::clamp(0.14 * box.height, 2.9 * small, 110.0),
                  strip = std::clamp(0.17 * box.height, 34.0, 120.0);
     const Box inner{box.x + pad, box.y + 4, box.width - 2 * pad, box.height - 8};
@@ -311,26 +302,22 @@ Figure pulse_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     // Below the trace there has to be room for the ruler of samples.
     fit(p.zoom, pulse.returned, 0.1, std::clamp((2 * grip_radius + 16) / p.zoom.box.height, 0.1, 0.5));
     fit(p.all, pulse.returned, 0.1, 0.1);
-    canvas.push_clip(box);
-    canvas.box(box, colours.paper);
+    p.begin();
     const double sent_width = std::min(0.34 * inner.width, 220.0);
     draw_sent(p, {inner.x, inner.y, sent_width, head});
-    canvas.text({inner.x, inner.y}, "sent", {colours.soft_ink, small, Across::left, Down::top});
+    canvas.text({inner.x, inner.y}, "sent", {p.colours.soft_ink, small, Across::left, Down::top});
     draw_legend(p, {inner.x + sent_width + 14, inner.y, inner.width - sent_width - 14, head});
     draw_zoom(p);
     draw_interval(p);
     draw_overview(p);
     depth_ticks(p, p.zoom);
-    canvas.text({inner.right(), p.zoom.box.bottom() + 5}, "ns", {colours.soft_ink, small, Across::right, Down::top});
+    canvas.text({inner.right(), p.zoom.box.bottom() + 5}, "ns", {p.colours.soft_ink, small, Across::right, Down::top});
     p.labels.keep({inner.right() - 2.2 * small, p.zoom.box.bottom() + 2, 2.2 * small, 1.4 * small});
     time_ticks(p, p.zoom);
-    canvas.text({inner.right(), p.all.box.bottom() + 5}, "ns", {colours.soft_ink, small, Across::right, Down::top});
+    canvas.text({inner.right(), p.all.box.bottom() + 5}, "ns", {p.colours.soft_ink, small, Across::right, Down::top});
     p.labels.keep({inner.right() - 2.2 * small, p.all.box.bottom() + 2, 2.2 * small, 1.4 * small});
     time_ticks(p, p.all);
-    p.figure.description = description_of(p);
-    finish_handles(canvas, colours, p.figure, style);
-    canvas.pop_clip();
-    return p.figure;
+    return p.finish(description_of(p));
 }
 
 }  // namespace gg
