@@ -5,6 +5,7 @@
 #include <algorithm>
 
 #include "sections.hpp"
+#include "wave/fourier.hpp"
 
 using namespace gg;
 
@@ -21,9 +22,9 @@ Scene pair(double gap) {
 }
 
 /// Two Ricker echoes `apart` seconds from each other on a fine grid, the second times `sign`.
-constexpr double fp = 400e6, dt = 0.02e-9;
+constexpr double fp = 400e6, dt = 0.005e-9;
 std::vector<double> two_rickers(double apart, double sign) {
-    std::vector<double> trace(1000);
+    std::vector<double> trace(4000);
     const auto ricker = [](double t) {
         const double u = (pi * fp * t) * (pi * fp * t);
         return (1.0 - 2.0 * u) * std::exp(-u);
@@ -91,48 +92,68 @@ TEST_CASE("Two echoes down one trace part where their envelopes dip, later the l
     CHECK(!reading_of(1.2 / fp, 1.0, 0.3).apart());
 }
 
-TEST_CASE("A thin bed is loudest at the tuning thickness of a Ricker wavelet and follows Widess below it") {
-    // Tuning at a two-way time of sqrt(6) / (2 pi fp), peak 1 + 2 exp(-3/2) = 1.44626 (derived; Chung & Lawton 1992 for
-    // lambda/8 as the thin-bed bound); composite peaks against two-way time, opposite polarity.
-    const auto peak = [](double apart) {
-        double top = 0.0;
-        for (const double v : two_rickers(apart, -1.0)) top = std::max(top, std::fabs(v));
-        return top;
+TEST_CASE("Two Ricker echoes part at a time apart of 0.618 periods, of one sign at 0.316; tuning lies between") {
+    // By an envelope on a grid 10 times finer (scipy.signal.hilbert) and the criterion of apart.hpp. Tuning, where
+    // echoes of opposite sign are loudest: sqrt(6) / (2 pi) = 0.390 periods. Of one sign they part sooner, by the null
+    // that their interference puts between them.
+    const auto parts_at = [](double sign) {
+        double none = 0.2, two = 0.8;
+        while (two - none > 1e-3) {
+            const double middle = 0.5 * (none + two);
+            (reading_of(middle / fp, sign).apart() ? two : none) = middle;
+        }
+        return two;
     };
-    const double rows[][2] = {{0.05, 0.304074}, {0.1, 0.593312},     {0.194924, 1.05444},
-                              {0.3, 1.36609},   {0.389848, 1.44626}, {0.6, 1.19311}};
-    for (const auto& row : rows) CHECK(std::fabs(peak(row[0] / fp) - row[1]) < 2e-3);
-    double loudest = 0.0, at = 0.0;
-    for (double apart = 0.2 / fp; apart < 0.6 / fp; apart += 0.002 / fp) {
-        if (peak(apart) > loudest) loudest = peak(apart), at = apart;
-    }
-    CHECK(std::fabs(at * fp - std::sqrt(6.0) / (2.0 * pi)) < 0.01);
-    // Widess 1973 (Geophysics 38(6), from memory): below an eighth of a wavelength the shape no longer changes, so the
-    // bed has no two echoes to be told apart, only an amplitude in proportion to its thickness.
-    CHECK(!reading_of(0.25 / fp, -1.0).apart());
-    CHECK(std::fabs(peak(0.05 / fp) / peak(0.1 / fp) - 0.5) < 0.02);
+    CHECK(std::fabs(parts_at(-1.0) - 0.618) < 0.01);
+    CHECK(std::fabs(parts_at(1.0) - 0.316) < 0.01);
+    // Widess 1973 (Geophysics 38(6), from memory): below an eighth of a wavelength, a time apart of a quarter period,
+    // the shape no longer changes: the bed has no two echoes to be told apart, only an amplitude.
+    for (const double sign : {-1.0, 1.0}) CHECK(!reading_of(0.25 / fp, sign).apart());
 }
 
-TEST_CASE("In the full section a bed in weak contrast is loudest near the tuning thickness of what returns") {
-    // 9.4 in 9: a line source's echo holds sqrt(f) more than its current, so its spectrum f^2.5 exp(-f^2/fp^2) peaks at
-    // sqrt(1.25) fp and tunes at about 1/sqrt(1.2) of the Ricker's thickness: between a sixth and a quarter wavelength.
-    double loudest = 0.0, at = 0.0;
+TEST_CASE("In the full section a thin bed is loudest at the Ricker wavelet's tuning thickness, as Widess below it") {
+    // What a line source gets back over a long way holds sqrt(jf) more than its current: a current of spectrum
+    // f^1.5 exp(-0.75 (f/f0)^2) comes back as a Ricker wavelet of f0 / sqrt(0.75), turned by 45 degrees.
     Scene s;
-    s.pulse.centre_frequency = fp;
-    s.separation = 0.0;
-    s.sampling = {0.0, 0.1, 1, 0.0, 20e-9, 1000};
-    const double wave = speed_of_light / 3.0 / fp;
-    for (double share = 0.10; share < 0.35; share += 0.005) {
-        s.ground.slabs = {{constant_material(9.0, 0.0), 0.6},
-                          {constant_material(9.4, 0.0), share * wave},
-                          {constant_material(9.0, 0.0), 0.0}};
-        const Section section = section_of(s);
-        double top = 0.0;
-        for (const double v : section.layers) top = std::max(top, std::fabs(v));
-        if (top > loudest) loudest = top, at = share;
+    double narrow = 1.34, wide = 1.6;
+    s.pulse.family = PulseFamily::gaussian_derivative;
+    while (wide - narrow > 1e-9) {
+        s.pulse.bandwidth = 0.5 * (narrow + wide);
+        (order_of(s.pulse) > 1.5 ? narrow : wide) = s.pulse.bandwidth;
     }
-    CHECK(at > 0.155);
-    CHECK(at < 0.200);
+    s.pulse.centre_frequency = fp * std::sqrt(0.75);
+    s.sampling = {0.0, 0.1, 1, 30e-9, 20e-9, 1000};
+    const double index = 1.01, v = speed_of_light / index, deep = 6.0;
+    const Material bed = constant_material(index * index, 0.0);
+    const auto echo = [&](double apart) {  // s between top and bottom; 0: the top alone
+        s.ground.slabs = {{air(), deep}, {bed, apart * v / 2.0}, {air(), 0.0}};
+        if (apart == 0.0) s.ground.slabs = {{air(), deep}, {bed, 0.0}};
+        std::vector<Complex> spectrum = forward(section_of(s).layers);
+        for (Complex& value : spectrum) value *= std::polar(1.0, -pi / 4.0);
+        spectrum.front() = spectrum.back() = 0.0;
+        return inverse(spectrum, 1000);
+    };
+    const double one = peak_of(echo(0.0));
+    const auto loudness = [&](double apart) { return peak_of(echo(apart)) / one; };
+    // Peak of two opposite Ricker wavelets against the time between them in periods; the largest is 1 + 2 exp(-3/2) at
+    // sqrt(6) / (2 pi) (derived; tuning at a quarter wavelength: Kallweit & Wood 1982, Geophysics 47(7)).
+    const double rows[][2] = {{0.05, 0.304074}, {0.1, 0.593312},     {0.194924, 1.05444},
+                              {0.3, 1.36609},   {0.389848, 1.44626}, {0.6, 1.19311}};
+    for (const auto& row : rows) CHECK(std::fabs(loudness(row[0] / fp) / row[1] - 1.0) < 0.015);
+    double loudest = 0.0, at = 0.0;
+    for (double apart = 0.3; apart < 0.5; apart += 0.005) {
+        const double value = loudness(apart / fp);
+        if (value > loudest) loudest = value, at = apart;
+    }
+    CHECK(std::fabs(at - std::sqrt(6.0) / (2.0 * pi)) < 0.015);
+    // And our own downward separation parts its top from its bottom where it parts two Ricker wavelets.
+    const double top = 2.0 * deep / speed_of_light - s.sampling.start;
+    const auto apart_at = [&](double apart) {
+        return dip_down(echo(apart), 20e-9 / 1000, top, top + apart, 0.0).apart();
+    };
+    CHECK(!apart_at(0.25 / fp));
+    CHECK(!apart_at(0.59 / fp));
+    CHECK(apart_at(0.645 / fp));
 }
 
 TEST_CASE("Targets one above the other and the two walls of one pipe part from a size on") {
