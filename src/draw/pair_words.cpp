@@ -47,7 +47,7 @@ std::string PairWords::sentence() const {
             return out += " show as two.";
         case PairPicture::Verdict::merging:
             return out +=
-                   measured() && knows(*seen, Separation::Known::all) ? " part only once focused." : " run together.";
+                   measured() && knows(*seen, Separation::Known::likely) ? " part only once focused." : " run together.";
         case PairPicture::Verdict::one:
             return out += " look like one.";
     }
@@ -58,7 +58,7 @@ std::string PairWords::least() const {
     const auto said = [&](double v) { return say(v, Quantity::length, units); };
     std::string out = "They part from ";
     if (measured() && knows(*seen, Separation::Known::raw)) {
-        const bool both = knows(*seen, Separation::Known::all);
+        const bool both = knows(*seen, Separation::Known::likely);
         const Value raw = seen->separation->least_raw, focused = seen->separation->least_focused;
         if (!raw.ok() && !both) return "Raw, they part at no gap.";
         if (!raw.ok() && !focused.ok()) return "They part at no gap.";

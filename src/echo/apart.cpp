@@ -99,6 +99,7 @@ bool stands(const Scene& scene) {
 double margin(const Dip& dip) { return dip.depth > 0.0 ? dip.depth - dip.needed : -dip.needed; }
 
 /// Smallest value of `size` from which on margin_at(size) >= 0, between low and high, starting from a guess. 3 %.
+/// Where even `high` is too small: that, and Issue::no_solution.
 template <class F>
 Value smallest(double low, double high, double guess, const F& margin_at) {
     constexpr double stride = 1.35, close = 1.03;
@@ -114,7 +115,7 @@ Value smallest(double low, double high, double guess, const F& margin_at) {
             bad = at;
             under = m;
             if (good > 0.0) break;
-            if (!(at < high)) return {0.0, Issue::no_solution};
+            if (!(at < high)) return {high, Issue::no_solution};
             at = std::min(high, at * stride);
         }
     }

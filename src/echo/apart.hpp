@@ -40,7 +40,7 @@ Dip dip_downwards(const Scene& scene, const Section& section);
 
 /// Smallest distance centre to centre, m, from which on the first two targets are told apart side by side: each moved
 /// about their midpoint, every gap computed in full. 3 %. Where they are two as soon as they do not touch, that
-/// distance. Issue::no_solution where even a gap of six times sqrt(v r W / 2) leaves one.
+/// distance. Issue::no_solution, with that gap, where even six times sqrt(v r W / 2) leaves one.
 Value smallest_gap(const Scene& scene, Reading reading);
 /// The same downwards: the second target straight below the first, within the layer. Issue::no_solution where the layer
 /// is too thin or the lower one stays hidden.

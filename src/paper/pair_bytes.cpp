@@ -29,6 +29,11 @@ class Writer {
         out.reserve(out.size() + sizeof(float) * values.size());
         for (const double v : values) put(static_cast<float>(v));
     }
+    void spread(const Spread& s) {
+        value(s.likely);
+        put(s.low);
+        put(s.high);
+    }
     void value(const Value& v) {
         put(v.value);
         put(v.issue);
@@ -71,6 +76,13 @@ class Reader {
             out[i] = finite_or_odd(v);
         }
         return out;
+    }
+    Spread spread() {
+        Spread s;
+        s.likely = value();
+        s.low = number();
+        s.high = number();
+        return s;
     }
     Value value() {
         Value v;
@@ -207,6 +219,7 @@ std::string write_answer(std::uint32_t number, PairStep step, const PairSection&
         to.dip(s->focused);
         to.value(s->least_raw);
         to.value(s->least_focused);
+        for (const Spread* spread : {&s->range_raw, &s->range_focused, &s->above, &s->through}) to.spread(*spread);
     }
     return std::move(to.out);
 }
@@ -228,6 +241,7 @@ std::optional<PairAnswer> read_answer(std::string_view bytes) {
         s.focused = from.dip();
         s.least_raw = from.value();
         s.least_focused = from.value();
+        for (Spread* spread : {&s.range_raw, &s.range_focused, &s.above, &s.through}) *spread = from.spread();
     }
     if (!from.ok || measured > 1 || !from.at_end()) return {};
     return out;

@@ -17,7 +17,8 @@ enum class PairStep : std::uint8_t {
     full,      ///< the full section
     focused,   ///< its focused picture
     raw,       ///< what is told apart in the raw section
-    all        ///< and in the focused picture
+    likely,    ///< and in the focused picture
+    all        ///< both again in every ground and depth held possible, and downwards
 };
 
 struct PairOrder {

@@ -4,8 +4,8 @@ namespace gg {
 namespace {
 
 // Of section_effort(): 0.1 ms each on one core of a desktop, 0.5 ms on a phone. Past the first there is no section,
-// past the second no search for the least gap, which takes two to ten sections.
-constexpr double most_effort = 20000.0, most_search_effort = 6000.0;
+// past the second no search for the least gap, which takes two to ten sections, past the third none in other grounds.
+constexpr double most_effort = 20000.0, most_search_effort = 6000.0, most_range_effort = 3000.0;
 
 }  // namespace
 
@@ -43,9 +43,13 @@ void PairDesk::bring_to(const PairOrder& order) {
             read_separation(pair_.scene, pair_.section, Reading::raw, pair_.separation.emplace());
             pair_.separation->known = Separation::Known::raw;
         }
-        if (order.step != PairStep::all) return;
-        read_separation(pair_.scene, pair_.section, Reading::focused, *pair_.separation);
-        pair_.separation->known = Separation::Known::all;
+        if (order.step == PairStep::raw) return;
+        if (pair_.separation->known == Separation::Known::raw) {
+            read_separation(pair_.scene, pair_.section, Reading::focused, *pair_.separation);
+            pair_.separation->known = Separation::Known::likely;
+        }
+        if (order.step == PairStep::all && effort_ <= most_range_effort)
+            add_ranges(*pair_.separation, order.plan, order.field);
         return;
     }
     // At the plan's own step, whose traces the coarse section has only some of.

@@ -26,6 +26,12 @@ struct Rule {
     std::string source;  ///< paper or standard; "common practice, no source"
 };
 
+/// Likely value and the ends over all that the plan holds possible.
+struct Spread {
+    Value likely;
+    double low = 0.0, high = 0.0;
+};
+
 struct Answer {
     std::string key;   ///< machine name, stable: "apart.sideways", "layer.0.speed", "pass.step"
     std::string name;  ///< "Told apart sideways"

@@ -18,12 +18,8 @@ struct Setting {
     double radius() const { return plan.target.shape == TargetShape::flat ? 0.0 : 0.5 * plan.target.size; }
 };
 
-/// Likely value and the ends over all cases. `f` gives a number for a case, or a Value: the likely one keeps its issue,
-/// and the ends count stand-ins, too.
-struct Spread {
-    Value likely;
-    double low = 0.0, high = 0.0;
-};
+/// `f` gives a number for a case, or a Value: the likely one keeps its issue, and the ends count stand-ins, too; a case
+/// of Issue::not_a_number does not count.
 template <class F>
 Spread spread_over(const Cases& cases, F f) {
     Spread s;

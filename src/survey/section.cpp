@@ -5,6 +5,7 @@
 
 #include "echo/media.hpp"
 #include "survey/cases.hpp"
+#include "survey/parts.hpp"
 #include "survey/sane.hpp"
 #include "survey/sideways.hpp"
 #include "survey/words.hpp"
@@ -91,9 +92,9 @@ void lay_time(Scene& scene, const Target& target, const Pass& pass, Detail detai
     s.window = s.samples * dt;
 }
 
-Scene scene_of(const Plan& plan, Detail detail, Polarisation polarisation) {
+Scene scene_of(const Plan& plan, Stack ground, Detail detail, Polarisation polarisation) {
     Scene scene;
-    scene.ground = likely_stack(plan);
+    scene.ground = std::move(ground);
     scene.pulse = plan.antenna.pulse;
     scene.separation = plan.antenna.separation;
     scene.height = plan.antenna.height;
@@ -132,7 +133,8 @@ Plan as_pair(Plan plan) {
 }
 
 Scene scene_for(const Plan& plan, Detail detail, Polarisation polarisation) {
-    return scene_of(make_sane(plan).plan, detail, polarisation);
+    const Plan sane = make_sane(plan).plan;
+    return scene_of(sane, likely_stack(sane), detail, polarisation);
 }
 
 std::string section_fault(const Plan& plan) {
@@ -317,6 +319,24 @@ Dip raw_dip(const Scene& scene) {
     s.samples = static_cast<int>(std::clamp(std::ceil(end / dt), 2.0, std::max(2.0, 1.0 * s.samples)));
     s.window = s.samples * dt;
     return dip_sideways(look, section_of(look, coarse_care), Reading::raw);
+}
+
+void add_ranges(Separation& out, const Plan& given, Polarisation polarisation) {
+    Plan plan = make_sane(as_pair(given)).plan;
+    const Cases cases = cases_of(plan);
+    // A ground in which the targets do not fit (a layer too thin for them) is not one of theirs.
+    const auto over = [&](const auto& measure) {
+        return spread_over(cases, [&](const Case& c) {
+            plan.target.depth = exactly(c.depth);
+            const Scene scene = scene_of(plan, c.ground->stack, Detail::full, polarisation);
+            return fault_of(scene).empty() ? measure(scene) : Value{0.0, Issue::not_a_number};
+        });
+    };
+    out.range_raw = over([](const Scene& scene) { return smallest_gap(scene, Reading::raw); });
+    out.range_focused = over([](const Scene& scene) { return smallest_gap(scene, Reading::focused); });
+    out.above = over(smallest_drop);
+    out.through = over(smallest_diameter);
+    out.known = Separation::Known::all;
 }
 
 void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out) {

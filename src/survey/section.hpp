@@ -73,14 +73,21 @@ Turning turning_for(const Plan& plan);
 struct Separation {
     Dip raw, focused;                ///< at the plan's own gap
     Value least_raw, least_focused;  ///< m, smallest gap at which they are two; Issue as in smallest_gap()
-    /// How far the measuring has come: the raw dip at the plan's gap; all that is raw; all.
-    enum class Known : std::uint8_t { dip, raw, all };
-    Known known = Known::all;
+    /// The same gaps over the grounds and depths that the plan holds possible; smallest distance, centre to centre, of
+    /// two such targets one above the other; smallest diameter from which top and bottom of one are two echoes. m
+    Spread range_raw, range_focused, above, through;
+    /// How far the measuring has come: the raw dip at the plan's gap; all that is raw; all at the likely ground and
+    /// depth; all.
+    enum class Known : std::uint8_t { dip, raw, likely, all };
+    Known known = Known::likely;
 };
 Separation separation_for(const Plan& plan, Polarisation polarisation = Polarisation::along);
 /// The raw dip alone, from no more of the section than it takes: the record's own traces up to a gap from the middle,
 /// to 1 % of the strongest echo. A fifth to a half of a section's time.
 Dip raw_dip(const Scene& scene);
+/// Measures what is still missing to Known::all: everything again in each of the plan's grounds and depths (as
+/// answers_for() takes them), and downwards. Up to ten times as long as the likely ones alone.
+void add_ranges(Separation& out, const Plan& plan, Polarisation polarisation = Polarisation::along);
 /// One half of it: the dip and the least gap of one reading.
 void read_separation(const Scene& scene, const Section& section, Reading reading, Separation& out);
 
@@ -90,10 +97,12 @@ PairPicture::Verdict verdict_of(const Separation& separation);
 
 /// Puts what was measured in the place of what travel times tell: the answer "apart.sideways" becomes the least gap in
 /// the raw section (the travel-time value stands beside it as a rule), "apart.focused" is added, and the verdict of the
-/// pair picture follows. The ends of the range keep the ratio to the likely value that the travel times give.
-/// Does nothing where not all was measured, or when done already.
+/// pair picture follows. Until their ranges are measured, too, the ends keep the ratio to the likely value that the
+/// travel times give; with them come "apart.above" and, where there is an inside, "apart.through".
+/// Does nothing where the least gaps are not known yet, or when done already.
 void settle(Answers& answers, const Plan& plan, const Separation& separation);
-/// answers_for(plan), settled wherever the plan has a section: the full reckoning, for files. About ten sections' time.
+/// answers_for(plan), settled wherever the plan has a section: the full reckoning, for files. About fifty sections'
+/// time.
 Answers settled_answers_for(const Plan& plan);
 
 /// How much a section asks for, 1 and up; time goes with it, roughly. (Periods of the centre frequency in the

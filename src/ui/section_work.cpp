@@ -67,6 +67,8 @@ std::optional<PairStep> SectionWork::next_step(double now) const {
             if (now - since_ < rest) return {};
             return PairStep::raw;
         case PairStep::raw:
+            return PairStep::likely;
+        case PairStep::likely:
             return PairStep::all;
         case PairStep::all:
             break;

@@ -56,7 +56,7 @@ TEST_CASE("an order reads back as written, and anything else is refused") {
     const std::string bytes = write_order(order);
     REQUIRE(read_order(bytes));
     CHECK(*read_order(bytes) == order);
-    for (const char* wrong : {"", "pair", "pair 1 2 0", "pair 1 2\n{}", "pair 1 6 0\n", "pair 1 2 2\n", "pair -1 2 0\n",
+    for (const char* wrong : {"", "pair", "pair 1 2 0", "pair 1 2\n{}", "pair 1 7 0\n", "pair 1 2 2\n", "pair -1 2 0\n",
                               "pair 1  2 0\n", "pair 1 2 0 0\n", "order 1 2 0\n", "pair 99999999999 2 0\n"}) {
         INFO(wrong);
         CHECK(!read_order(std::string(wrong) + bytes.substr(bytes.find('\n') + 1)));
@@ -110,13 +110,26 @@ TEST_CASE("the desk's steps give the section, its focused picture and its separa
 
     PairDesk fresh;  // one that saw none of the steps before gives the same
     for (PairDesk* at : {&desk, &fresh}) {
-        const PairSection all = asked(*at, plan, PairStep::all).pair;
-        REQUIRE(all.separation);
-        CHECK(all.separation->known == Separation::Known::all);
-        same(all.separation->raw, direct.separation->raw);
-        same(all.separation->focused, direct.separation->focused);
-        CHECK(all.separation->least_raw == direct.separation->least_raw);
-        CHECK(all.separation->least_focused == direct.separation->least_focused);
+        const PairSection likely = asked(*at, plan, PairStep::likely).pair;
+        REQUIRE(likely.separation);
+        CHECK(likely.separation->known == Separation::Known::likely);
+        same(likely.separation->raw, direct.separation->raw);
+        same(likely.separation->focused, direct.separation->focused);
+        CHECK(likely.separation->least_raw == direct.separation->least_raw);
+        CHECK(likely.separation->least_focused == direct.separation->least_focused);
+    }
+    Separation ranged = *direct.separation;
+    add_ranges(ranged, plan);
+    const PairSection all = asked(desk, plan, PairStep::all).pair;
+    REQUIRE(all.separation);
+    CHECK(all.separation->known == Separation::Known::all);
+    CHECK(all.separation->least_raw == ranged.least_raw);
+    using Ranged = Spread Separation::*;
+    for (const Ranged spread :
+         {&Separation::range_raw, &Separation::range_focused, &Separation::above, &Separation::through}) {
+        CHECK(((*all.separation).*spread).likely == (ranged.*spread).likely);
+        CHECK(((*all.separation).*spread).low == (ranged.*spread).low);
+        CHECK(((*all.separation).*spread).high == (ranged.*spread).high);
     }
 }
 

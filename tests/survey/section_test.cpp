@@ -228,6 +228,35 @@ TEST_CASE("two are told apart at gaps above the measured least one and not below
     CHECK_FALSE(separation_for(bars(0.8 * far.least_raw.value)).raw.apart());
 }
 
+TEST_CASE("a range is what the same search finds at the ends of the ground and the depth") {
+    Plan plan = bars(0.2);
+    plan.ground = {own_layer(9.0, 0.005, 100.0)};
+    plan.ground[0].matter.inputs[Input::permittivity] = {6.0, 9.0, 14.0};
+    plan.target.depth = {0.25, 0.3, 0.4};
+    plan.target.filling = Filling::plastic_air;
+    Separation found;
+    add_ranges(found, plan);
+    CHECK(found.known == Separation::Known::all);
+    const auto least = [&](double permittivity, double depth, Reading reading) {
+        Plan other = plan;
+        other.ground = {own_layer(permittivity, 0.005, 100.0)};
+        other.target.depth = exactly(depth);
+        return smallest_gap(scene_for(other), reading).value;
+    };
+    for (const Reading reading : {Reading::raw, Reading::focused}) {
+        const Spread& spread = reading == Reading::raw ? found.range_raw : found.range_focused;
+        REQUIRE(spread.likely.ok());
+        CHECK(spread.likely.value == doctest::Approx(least(9.0, 0.3, reading)).epsilon(0.001));
+        CHECK(spread.low <= least(14.0, 0.25, reading) * 1.001);
+        CHECK(spread.high >= least(6.0, 0.4, reading) * 0.999);  // faster and deeper: farther apart
+        CHECK(spread.high > spread.low);
+    }
+    REQUIRE(found.above.likely.ok());
+    CHECK(found.above.likely == smallest_drop(scene_for(plan)));
+    CHECK(found.through.likely == smallest_diameter(scene_for(plan)));
+    CHECK(found.above.high >= found.above.likely.value);
+}
+
 TEST_CASE("a longer record, and larger or more targets, take more effort") {
     const Plan plan = bars(0.2);
     const double effort = section_effort(scene_for(plan));
@@ -270,7 +299,7 @@ TEST_CASE("what was measured takes the place of what travel times tell, which st
     const Answers quick = answers_for(plan), full = settled_answers_for(plan);
     const Answer &before = *quick.find("apart.sideways"), &after = *full.find("apart.sideways");
     REQUIRE(full.find("apart.focused"));
-    CHECK(full.list.size() == quick.list.size() + 1);
+    CHECK(full.list.size() == quick.list.size() + 2);  // focused, and one above the other; a bar has no inside
     const Separation measured = separation_for(plan);
     CHECK(after.likely == measured.least_raw);
     CHECK(full.find("apart.focused")->likely == measured.least_focused);
@@ -282,6 +311,23 @@ TEST_CASE("what was measured takes the place of what travel times tell, which st
     Answers twice = full;
     settle(twice, plan, measured);
     CHECK(twice.list.size() == full.list.size());
+
+    // In two steps, as a screen does it: at first with the range of the travel times.
+    Answers stepwise = quick;
+    settle(stepwise, plan, measured);
+    const Answer first = *stepwise.find("apart.sideways");
+    CHECK(first.low / first.likely.value == doctest::Approx(before.low / before.likely.value));
+    CHECK_FALSE(stepwise.find("apart.above"));
+    Separation ranged = measured;
+    add_ranges(ranged, plan);
+    settle(stepwise, plan, ranged);
+    CHECK(stepwise.list.size() == full.list.size());
+    for (std::size_t i = 0; i < full.list.size(); ++i) {
+        CHECK(stepwise.list[i].key == full.list[i].key);
+        CHECK(stepwise.list[i].why == full.list[i].why);
+        CHECK(stepwise.list[i].formula == full.list[i].formula);
+        CHECK(stepwise.list[i].high == full.list[i].high);
+    }
 
     Plan flat = plan;
     flat.target.shape = TargetShape::flat;
