@@ -1,5 +1,7 @@
 #include "paper/pair_desk.hpp"
 
+#include <cmath>
+
 namespace gg {
 namespace {
 
@@ -34,32 +36,57 @@ void PairDesk::bring_to(const PairOrder& order) {
     } else if (order.step == PairStep::full || !same || pair_.detail != Detail::full) {
         begin(order, Detail::full);
     }
-    if (!pair_.section.ok() || order.step == PairStep::full) return;
+    if (!pair_.section.ok()) return;
+    if (order.step <= PairStep::searched) glance(order);
+    if (order.step == PairStep::focused) add_focused(pair_);
+    if (order.step >= PairStep::raw && effort_ <= most_search_effort) measure(order);
+}
 
-    if (order.step == PairStep::focused) return add_focused(pair_);
-    if (order.step >= PairStep::raw) {
-        if (effort_ > most_search_effort) return;
-        if (!pair_.separation) {
-            read_separation(pair_.scene, pair_.section, Reading::raw, pair_.separation.emplace());
-            pair_.separation->known = Separation::Known::raw;
-        }
-        if (order.step == PairStep::raw) return;
-        if (pair_.separation->known == Separation::Known::raw) {
-            read_separation(pair_.scene, pair_.section, Reading::focused, *pair_.separation);
-            pair_.separation->known = Separation::Known::likely;
-        }
-        if (order.step == PairStep::all && effort_ <= most_range_effort)
-            add_ranges(*pair_.separation, order.plan, order.field);
-        return;
-    }
-    // At the plan's own step, whose traces the coarse section has only some of.
+PairDesk::Searched PairDesk::searched_in(const PairOrder& order, const Scene& scene) {
+    Searched out{order.plan, order.field, scene.sampling.step};
+    out.plan.target.gap = Target{}.gap;
+    return out;
+}
+
+/// Beside a coarse section, which has only some of the traces to read: the dip, and what is known of the least gaps.
+void PairDesk::glance(const PairOrder& order) {
     const Scene scene = scene_for(as_pair(order.plan), Detail::full, order.field);
     Separation& s = pair_.separation.emplace();
-    s.known = Separation::Known::dip;
+    if (searched_ == searched_in(order, scene)) {
+        s = found_;
+        s.focused = {};  // from the least gap on there are two
+        const double gap = std::abs(scene.targets[0].x - scene.targets[1].x);
+        if (s.least_focused.ok() && gap >= s.least_focused.value) s.focused.depth = s.focused.needed;
+    } else if (order.step == PairStep::searched && effort_ <= most_search_effort) {
+        s.least_raw = smallest_gap(scene, Reading::raw);
+        s.known = Separation::Known::raw;
+    } else {
+        s.known = Separation::Known::dip;
+    }
     s.raw = raw_dip(scene);
-    if (order.step == PairStep::coarse || effort_ > most_search_effort) return;
-    s.least_raw = smallest_gap(scene, Reading::raw);
-    s.known = Separation::Known::raw;
+}
+
+void PairDesk::measure(const PairOrder& order) {
+    const Searched here = searched_in(order, pair_.scene);
+    if (!pair_.separation && searched_ == here) {
+        pair_.separation = found_;
+        pair_.separation->raw = dip_sideways(pair_.scene, pair_.section, Reading::raw);
+        pair_.separation->focused = dip_sideways(pair_.scene, pair_.section, Reading::focused);
+    }
+    if (!pair_.separation) {
+        read_separation(pair_.scene, pair_.section, Reading::raw, pair_.separation.emplace());
+        pair_.separation->known = Separation::Known::raw;
+    }
+    Separation& s = *pair_.separation;
+    if (order.step == PairStep::raw) return;
+    if (s.known == Separation::Known::raw) {
+        read_separation(pair_.scene, pair_.section, Reading::focused, s);
+        s.known = Separation::Known::likely;
+    }
+    if (order.step == PairStep::all && s.known == Separation::Known::likely && effort_ <= most_range_effort)
+        add_ranges(s, order.plan, order.field);
+    searched_ = here;
+    found_ = s;
 }
 
 std::string PairDesk::answer(std::string_view bytes) {

@@ -264,7 +264,7 @@ void Program::State::work_on_section() {
     session.computing = section.computing(session.now);
     // The answers speak of the usual way to turn the antenna, and of the plan as it is now.
     if (session.section && session.section->separation && session.view.field == Polarisation::along &&
-        section.current())
+        section.least_gaps_hold())
         settle(session.answers, session.plan, *session.section->separation);
 }
 

@@ -121,6 +121,13 @@ bool SectionWork::keep(PairAnswer& answer) {
     return true;
 }
 
+bool SectionWork::least_gaps_hold() const {
+    if (!of_ || !wanted_) return false;
+    Of at_this_gap = *of_;
+    at_this_gap.plan.target.gap = wanted_->plan.target.gap;
+    return at_this_gap == *wanted_;
+}
+
 bool SectionWork::computing(double now) const { return asked_ && now - asked_->at >= say_after; }
 
 double SectionWork::due(double now) const {

@@ -22,6 +22,8 @@ class SectionWork {
     const PairSection* section() const { return pair_ && pair_->section.ok() ? &*pair_ : nullptr; }
     /// The section, or the reason for none, is of the plan last given.
     bool current() const { return of_ == wanted_; }
+    /// So are the least gaps that came with it: they do not depend on the plan's own gap.
+    bool least_gaps_hold() const;
     /// Why there is none, one sentence.
     const std::string& reason() const { return reason_; }
     /// An order has been out for so long that it should be said.

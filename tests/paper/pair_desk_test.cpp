@@ -147,6 +147,31 @@ TEST_CASE("a coarse section comes with the raw dip at the plan's gap, and on dem
     CHECK(searched.separation->least_raw == smallest_gap(scene_for(plan), Reading::raw));
 }
 
+TEST_CASE("the least gaps are searched once for all gaps of a plan, and hold for each") {
+    PairDesk desk;
+    Plan plan = quick_plan();
+    plan.pass.step = 0.02;
+    const Separation once = *asked(desk, plan, PairStep::all).pair.separation;
+    REQUIRE(once.least_raw.ok());
+    REQUIRE(once.least_focused.ok());
+    for (const double gap : {0.15, 0.25, 0.7}) {
+        plan.target.gap = gap;
+        const Separation fresh = separation_for(plan), held = *asked(desk, plan, PairStep::coarse).pair.separation,
+                         rested = *asked(desk, plan, PairStep::raw).pair.separation;
+        for (const Separation& s : {held, rested}) {
+            CHECK(s.known == once.known);
+            CHECK(s.least_raw == fresh.least_raw);
+            CHECK(s.least_focused == fresh.least_focused);
+            CHECK(verdict_of(s) == verdict_of(fresh));
+        }
+        same(held.raw, raw_dip(scene_for(plan)));
+        same(rested.raw, fresh.raw);
+        same(rested.focused, fresh.focused);
+    }
+    plan.target.depth = exactly(0.5);
+    CHECK(asked(desk, plan, PairStep::coarse).pair.separation->known == Separation::Known::dip);
+}
+
 TEST_CASE("a step of another plan, or of the field turned, does not build on the section before") {
     PairDesk desk;
     Plan plan = quick_plan();

@@ -373,7 +373,9 @@ TEST_CASE("Pair shows the section, measures it once the plan rests, and then is 
     b.wait(2.0);
     CHECK(b.value("picture").find(" raw, ") != std::string::npos);
 
-    // While a finger moves the gap the verdict is measured; when it lifts, so are the least gaps.
+    // While a finger moves the gap the verdict is measured, and the least gaps stay: they do not depend on it.
+    b.press("section.field");
+    b.wait(2.0);
     const Point grip = b.centre("handle.target.gap");
     b.program.pointer_button(grip.x, grip.y, true, true);
     b.frames(3);
@@ -382,11 +384,25 @@ TEST_CASE("Pair shows the section, measures it once the plan rests, and then is 
     CHECK(b.program.plan().target.gap > 0.4);
     const auto gap = say(b.program.plan().target.gap, Quantity::length, UnitSystem::metric);
     CHECK(b.value("picture").find("Two at " + gap) != std::string::npos);
-    CHECK(b.value("picture").find(" focused.") == std::string::npos);
+    CHECK(b.value("picture").find(" raw, ") != std::string::npos);
+    CHECK(b.program.answers_json().find("apart.focused") != std::string::npos);
     b.program.pointer_button(grip.x + 20, grip.y, false, true);
     b.wait(2.0);
     CHECK(b.value("picture").find(" raw, ") != std::string::npos);
-    CHECK(b.value("picture").find(" focused.") != std::string::npos);
+
+    // They do depend on the depth; when the finger lifts, they are measured anew.
+    const Point deep = b.centre("handle.target.depth");
+    b.program.pointer_button(deep.x, deep.y, true, true);
+    b.frames(3);
+    b.program.pointer_move(deep.x, deep.y + 20, true);
+    b.frames(3);
+    CHECK(b.value("picture").find("Two at " + gap) != std::string::npos);
+    CHECK(b.value("picture").find(" focused.") == std::string::npos);
+    CHECK(b.program.answers_json().find("apart.focused") == std::string::npos);
+    b.program.pointer_button(deep.x, deep.y + 20, false, true);
+    b.wait(2.0);
+    CHECK(b.value("picture").find(" raw, ") != std::string::npos);
+    CHECK(b.program.answers_json().find("apart.focused") != std::string::npos);
 }
 
 TEST_CASE("while the section is computed elsewhere the screen goes on, says so, and keeps the last one") {
