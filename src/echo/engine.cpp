@@ -84,7 +84,7 @@ double way_round(const Scene& scene, double care, double end, double farthest) {
         const double down = time_down(scene.ground, t.depth - t.radius, scene.pulse.centre_frequency).value;
         legs = std::min(legs, 2.0 * down + scene.height / speed_of_light);
     }
-    const double by_air = 0.9 * std::sqrt(std::max(1.0, care)) * speed_of_light * std::max(0.3 * end, end - legs);
+    const double by_air = 0.9 * std::sqrt(std::max(1.0, care)) * speed_of_light * std::max(0.6 * end, end - legs);
     return std::max({fastest * end, 0.5 * fastest * end + farthest, farthest + by_air});
 }
 
