@@ -190,8 +190,12 @@ void draw_wavelength(Beam& b) {
     b.figure.handles.push_back(
         {"antenna.frequency", "Centre frequency", grip, Handle::Way::across, f, f / px, {}, 1e6, true, 0.0});
     const TextStyle words{b.colours.wave, b.small(), Across::right, Down::top, true};
-    b.labels.put({{right, y + swing + 5}, {right, y + swing + 5 + 1.3 * b.style.text}},
-                 "wavelength " + b.length(wavelength), words);
+    const std::string said = "wavelength " + b.length(wavelength);
+    // Clear of the grip under the target, and of the axis.
+    const double end = std::max(std::min(right, b.cut.middle - b.beside_grip()),
+                                b.cut.plot.x + b.canvas.measure(said, words) + 8),
+                 under = y + swing + 5;
+    b.labels.put({{end, under}, {end, under + 1.3 * b.style.text}, {end, under + 2.6 * b.style.text}}, said, words);
 }
 
 void draw_patch(Beam& b) {
@@ -204,9 +208,10 @@ void draw_patch(Beam& b) {
         b.canvas.line(points({Point{p.x, p.y - 6}, Point{p.x, p.y + 6}}), {b.colours.wave, 2});
     b.canvas.pop_clip();
     const TextStyle words{b.colours.wave, b.style.text, Across::left, Down::bottom, true};
-    const double lift = 7, start = b.cut.middle + 8;
-    b.labels.put({{start, left.y - lift}, {start, left.y - lift - 1.4 * b.style.text}, {left.x, left.y - lift}},
-                 "lit patch " + b.length(2 * half), words);
+    const std::string said = "lit patch " + b.length(2 * half);
+    const double row = left.y - 7,
+                 start = std::min(b.cut.middle, b.cut.plot.right() - b.canvas.measure(said, words) - 16) + 8;
+    b.labels.put({{start, row}, {start, row - 1.4 * b.style.text}, {left.x, row}}, said, words);
 }
 
 void add_target_handles(Beam& b) {
@@ -248,8 +253,8 @@ void add_target_handles(Beam& b) {
 
 void label_depth(Beam& b) {
     const Point grip = b.figure.handles.front().at;  // the depth's own, added first
-    const double x = grip.x + grip_radius + 8;
-    b.labels.put({{x, grip.y - 5}, {x, grip.y + 5 + 1.25 * b.style.text}}, b.length(b.depth),
+    const double x = grip.x + b.beside_grip(), row = grip.y - 5, line = 1.25 * b.style.text;
+    b.labels.put({{x, row}, {x, grip.y + 5 + line}, {x, row - line - 2}}, b.length(b.depth),
                  {b.colours.wave, b.style.text, Across::left, Down::bottom, true});
 }
 

@@ -141,19 +141,21 @@ void add_spacing_handle(Site& s) {
                                 0.0});
     s.labels.keep_round(b, grip_radius + 2);
     const std::string words = (n > 1 ? tick_words(n) + " spacings of " : "spacing ") + s.length(spacing);
-    s.labels.put({{b.x + grip_radius + 6, b.y}, {0.5 * (a.x + b.x), b.y - grip_radius - 4}}, words,
-                 {s.colours.wave, s.small(), Across::left, Down::middle, true});
+    s.labels.put({{b.x + s.beside_grip(), b.y},
+                  {0.5 * (a.x + b.x), b.y - grip_radius - 4},
+                  {std::min(a.x, b.x), b.y + grip_radius + 4 + 0.7 * s.small()}},
+                 words, {s.colours.wave, s.small(), Across::left, Down::middle, true});
 }
 
+/// In the upper right corner, above the site.
 void draw_north(Site& s) {
-    const double r = 0.9 * s.style.text;
-    const Point c{s.style.box.right() - r - 10, s.style.box.y + 2.2 * s.style.text};
-    s.canvas.disc(c, r + 4, s.colours.paper.with_alpha(0.85));
-    s.canvas.area(points({Point{c.x, c.y - r}, {c.x + 0.45 * r, c.y + 0.8 * r}, {c.x, c.y + 0.4 * r}}), s.colours.ink);
-    s.canvas.line(points({Point{c.x, c.y - r}, {c.x - 0.45 * r, c.y + 0.8 * r}, {c.x, c.y + 0.4 * r}}),
+    const double r = 0.6 * s.style.text;
+    const Point c{s.style.box.right() - r - 10, s.style.box.y + s.small() + r + 4};
+    s.canvas.area(points({Point{c.x, c.y - r}, {c.x + 0.6 * r, c.y + 0.8 * r}, {c.x, c.y + 0.4 * r}}), s.colours.ink);
+    s.canvas.line(points({Point{c.x, c.y - r}, {c.x - 0.6 * r, c.y + 0.8 * r}, {c.x, c.y + 0.4 * r}}),
                   {s.colours.ink, 1.2}, true);
-    s.canvas.text({c.x, c.y - r - 2}, "N", {s.colours.ink, s.small(), Across::centre, Down::bottom, true});
-    s.labels.keep({c.x - r - 4, c.y - 2.4 * r, 2 * r + 8, 3.6 * r});
+    s.canvas.text({c.x, c.y - r - 1}, "N", {s.colours.ink, s.small(), Across::centre, Down::bottom, true});
+    s.labels.keep({c.x - r - 4, s.style.box.y, 2 * r + 8, c.y + r - s.style.box.y});
 }
 
 void draw_legend(Site& s) {
@@ -171,13 +173,16 @@ void draw_legend(Site& s) {
     s.canvas.area(points({{x - 12, y - 5.5}, {x - 6.5, y}, {x - 12, y + 5.5}, {x - 17.5, y}}), s.colours.ink);
 }
 
-std::string sentence_of(const Site& s) {
+std::string count_of(const Site& s) {
     const std::size_t hits = s.answers.lanes.hits.size();
-    std::string words = std::to_string(s.answers.lanes.lines.size()) + " lines, " + std::to_string(hits) +
-                        (hits == 1 ? " hit" : " hits");
+    return std::to_string(s.answers.lanes.lines.size()) + " lines, " + std::to_string(hits) +
+           (hits == 1 ? " hit" : " hits");
+}
+
+std::string sentence_of(const Site& s) {
     const double between = answer_or(s.answers, "lanes.between_hits", 0.0);
-    if (hits > 1 && between > 0) words += ", one every " + s.length(between);
-    return words;
+    const bool several = s.answers.lanes.hits.size() > 1 && between > 0;
+    return count_of(s) + (several ? ", one every " + s.length(between) : "");
 }
 
 }  // namespace
@@ -197,8 +202,10 @@ Figure lanes_figure(Canvas& canvas, const Plan& plan, const Answers& answers, co
     canvas.line(outline, {s.colours.ink, 2}, true);
     draw_target(s);
     draw_north(s);
-    s.labels.put({{style.box.x + 10, style.box.y + 0.55 * head}}, sentence_of(s),
-                 {s.colours.ink, style.text, Across::left, Down::middle, true}, false);
+    const Point corner{style.box.x + 10, style.box.y + 0.55 * head};
+    const TextStyle strong{s.colours.ink, style.text, Across::left, Down::middle, true};
+    const double north = 1.2 * style.text + 15;
+    if (!s.put_line(corner, sentence_of(s), strong, north)) s.put_line(corner, count_of(s), strong, north);
     draw_legend(s);
     add_bearing_handle(s);
     add_spacing_handle(s);

@@ -13,6 +13,14 @@ namespace {
 
 constexpr double shade_height = 10.0;  // css px
 
+double least_of(const std::vector<double>& values) {
+    double out = 0.0;
+    for (const double v : values) {
+        if (std::isfinite(v) && (out == 0.0 || v < out)) out = v;
+    }
+    return out;
+}
+
 struct Pair : Sketch {
     using Sketch::Sketch;
     Box curve, panel, ground;           ///< from the top: strength along the line, travel times, targets to scale
@@ -27,6 +35,9 @@ struct Pair : Sketch {
     double y(double time) const { return panel.y + (time - first) / (last - first) * panel.height; }
     double scale() const { return panel.width / (to - from); }
     PairWords words() const { return {plan, answers, seen, style.units}; }
+    /// Where the panel's own axis has the target's top; 0 where nothing arrives.
+    double depth_place() const { return by_depth ? plan.target.depth.likely : least_of(answers.pair.arrival_left); }
+    Point depth_grip() const { return inside({panel.x + grip_radius + 4, y(depth_place())}, panel, grip_radius + 2); }
     double middle() const { return answers.pair.first + 0.5 * plan.target.gap; }
     /// The panel, and the picture beside it, in the section's own places along the line.
     SectionFrame frame() const { return frame(panel, first, last); }
@@ -36,14 +47,6 @@ struct Pair : Sketch {
         return {box, from + shift, to + shift, top, bottom};
     }
 };
-
-double least_of(const std::vector<double>& values) {
-    double out = 0.0;
-    for (const double v : values) {
-        if (std::isfinite(v) && (out == 0.0 || v < out)) out = v;
-    }
-    return out;
-}
 
 std::vector<Point> strength(const Pair& p, const std::vector<double>& values) {
     std::vector<Point> out;
@@ -92,9 +95,11 @@ void draw_arrivals(Pair& p, const std::vector<double>& times, const std::vector<
 /// What a panel shows; the first one says also that something newer is being computed.
 void draw_name(Pair& p, const Box& box, const std::string& name, const std::string& details) {
     const TextStyle words{p.colours.ink, p.small(), Across::left, Down::middle};
-    const Point at{box.x + 8, box.y + p.small()};
+    // In the corner, or beside the grip where that stands there.
+    const Point at{box.x + 8, box.y + p.small()}, beside{p.depth_grip().x + p.beside_grip(), at.y};
     const std::string busy = p.style.computing && box.x == p.panel.x ? ", computing" : "";
-    if (!p.labels.put({at}, name + ", " + details + busy, words)) p.labels.put({at}, name + busy, words);
+    if (!p.labels.put({at, beside}, name + ", " + details + busy, words))
+        p.labels.put({at, beside}, name + busy, words);
 }
 
 /// Each target where it lies in the focused picture, in whose own two scales it is no circle.
@@ -258,22 +263,26 @@ void draw_ground(Pair& p) {
                                 false,
                                 0.0});
     p.labels.keep_round(grip, grip_radius + 2);
-    const std::string words = "gap " + p.length(p.plan.target.gap);
-    p.labels.put({{0.5 * (left + right), y}, {p.ground.x + 8 + 4 * p.small(), y}}, words,
-                 {p.colours.wave, p.small(), Across::centre, Down::middle, true});
+    const std::string length = p.length(p.plan.target.gap);
+    const TextStyle strong{p.colours.wave, p.small(), Across::centre, Down::middle, true};
+    for (const std::string& words : {"gap " + length, length}) {
+        const double half = 0.5 * p.canvas.measure(words, strong) + 6;
+        const double before = p.ground.x + 2 + half, after = grip.x + p.beside_grip() - 6 + half;
+        const double aside = after + half < p.ground.right() ? after : before;
+        if (p.labels.put({{0.5 * (left + right), y}, {before, y}, {aside, y}}, words, strong)) break;
+    }
 }
 
 void add_depth_handle(Pair& p) {
-    const double apex = least_of(p.answers.pair.arrival_left), depth = p.plan.target.depth.likely;
-    if (!(apex > 0)) return;
-    const double place = p.by_depth ? depth : apex;
-    const Point grip = inside({p.panel.x + grip_radius + 4, p.y(place)}, p.panel, grip_radius + 2);
+    const double place = p.depth_place(), depth = p.plan.target.depth.likely;
+    if (!(place > 0)) return;
+    const Point grip = p.depth_grip();
     const double per_px = depth / place * (p.last - p.first) / p.panel.height;
     p.canvas.line(points({grip, Point{p.x(p.answers.pair.first), grip.y}}), {p.colours.wave, 1.2, 3, 4});
     p.figure.handles.push_back(
         {"target.depth", "Depth to top", grip, Handle::Way::down, depth, per_px, {}, 0.01, false, 0.0});
-    p.labels.keep_round(grip, grip_radius + 2);
-    p.labels.put({{grip.x + grip_radius + 8, grip.y - 3}}, p.length(depth) + " deep",
+    const double x = grip.x + p.beside_grip(), line = 1.25 * p.small();
+    p.labels.put({{x, grip.y - 3}, {x, grip.y + 4 + line}, {x, grip.y + 4 + 2 * line}}, p.length(depth) + " deep",
                  {p.colours.wave, p.small(), Across::left, Down::bottom, true});
 }
 
@@ -282,9 +291,8 @@ void draw_captions(Pair& p, Box box) {
     const TextStyle words{p.colours.soft_ink, p.small(), Across::left, Down::middle};
     const PairWords said = p.words();
     const double line = 1.4 * p.small(), x = box.x + 10, y = box.bottom() - (box.height > 2 * line ? 1.5 : 0.5) * line;
-    if (!p.labels.put({{x, y}}, said.turning(), words, false))
-        p.labels.put({{x, y}}, said.turning_in_brief(), words, false);
-    if (box.height >= 2 * line) p.labels.put({{x, y + line}}, said.rules(), words, false);
+    if (!p.labels.put({{x, y}}, said.turning(), words, false)) p.put_line({x, y}, said.turning_in_brief(), words);
+    if (box.height >= 2 * line) p.put_line({x, y + line}, said.rules(), words);
 }
 
 /// The verdict large, the sentences beside it: in one row, or in two where the picture is narrow.
@@ -298,9 +306,9 @@ void draw_verdict(Pair& p, double height) {
     const TextStyle row{p.colours.ink, p.style.text, Across::left, Down::middle};
     if (p.labels.put({{after, y}}, first + " " + second, row, false)) return;
     const TextStyle low{p.colours.ink, p.small(), Across::left, Down::middle};
-    p.labels.put({{after, y - 0.62 * p.small()}}, first, low, false);
+    p.put_line({after, y - 0.62 * p.small()}, first, low);
     if (!p.labels.put({{after, y + 0.64 * p.small()}}, second, low, false))
-        p.labels.put({{after, y + 0.64 * p.small()}}, said.least_in_brief(), low, false);
+        p.put_line({after, y + 0.64 * p.small()}, said.least_in_brief(), low);
 }
 
 /// From the top: verdict, strength along the line and its shades (without a section), panel, strip of ground, captions
@@ -360,6 +368,7 @@ Figure pair_figure(Canvas& canvas, const Plan& plan, const Answers& answers, con
         draw_strength(p);
         draw_shades(p, {p.curve.x, p.curve.bottom() + 3, p.curve.width, shade_height});
     }
+    p.labels.keep_round(p.depth_grip(), grip_radius + 2);
     draw_panel(p);
     draw_ground(p);
     add_depth_handle(p);

@@ -60,6 +60,12 @@ void draw_grip(Canvas& canvas, const Palette& colours, const Handle& handle, boo
     }
 }
 
+bool Sketch::put_line(Point at, std::string_view words, TextStyle look, double reserved) {
+    const double room = style.box.right() - reserved - at.x - 0.3 * look.size;
+    look.size *= std::clamp(room / std::max(1.0, canvas.measure(words, look)), 0.75, 1.0);
+    return labels.put({at}, words, look, false);
+}
+
 void Sketch::begin() {
     canvas.push_clip(style.box);
     canvas.box(style.box, colours.paper);
@@ -137,7 +143,8 @@ std::string tick_words(double value) {
 
 void draw_scale_bar(Sketch& s, Point at, double most, double px_per_metre) {
     if (!(px_per_metre > 0) || !(most > 20)) return;
-    const AxisUnit unit = length_axis(most / px_per_metre, s.style.units);
+    // The unit of the axis beside it, which is some times as long.
+    const AxisUnit unit = length_axis(2.5 * most / px_per_metre, s.style.units);
     const double px = px_per_metre * unit.metres;
     double length = nice_step(most / px);
     while (length * px > most && length > 1e-9) length = nice_step(length / 2.5);

@@ -30,6 +30,8 @@ class Labels {
     std::vector<Box> taken_;
 };
 
+constexpr double grip_radius = 12.0;  ///< css px
+
 /// A picture being drawn: what each figure reads, draws with and gives back. The figures add what is their own.
 struct Sketch {
     Canvas& canvas;
@@ -48,7 +50,13 @@ struct Sketch {
           colours(palette(look.dark)),
           labels(on, colours, look.box) {}
     double small() const { return 0.85 * style.text; }
+    /// From a grip's centre to words beside it, plate and all.
+    double beside_grip() const { return grip_radius + 4 + 0.25 * style.text; }
     std::string length(double metres) const { return say(metres, Quantity::length, style.units); }
+
+    /// Words on one line from `at`, made smaller by up to a quarter where there is too little room for them.
+    /// @param reserved  css px kept free at the picture's right edge
+    bool put_line(Point at, std::string_view words, TextStyle look, double reserved = 0.0);
 
     /// The first thing a figure does: paper in its box, and nothing drawn outside.
     void begin();
@@ -56,8 +64,6 @@ struct Sketch {
     /// give, draws the grips of the others when the style wants them, and gives the figure with its description.
     Figure finish(std::string description);
 };
-
-constexpr double grip_radius = 12.0;  ///< css px
 
 /// The sign of a thing that can be dragged: an accent disc with chevrons the way it goes; stronger while held.
 void draw_grip(Canvas& canvas, const Palette& colours, const Handle& handle, bool held);

@@ -171,7 +171,7 @@ void draw_interval(Pulse& p) {
     p.labels.keep_round(grip, grip_radius + 2);
     const std::string words =
         (n > 1 ? tick_words(n) + " samples, " : "interval ") + nanoseconds(n * interval, p.style.units);
-    p.labels.put({{x, y - 10}, {grip.x + grip_radius + 6, y + 0.5 * p.small()}}, words,
+    p.labels.put({{x, y - 10}, {grip.x + p.beside_grip(), y + 0.5 * p.small()}}, words,
                  {p.colours.wave, p.small(), Across::left, Down::bottom, true});
 }
 
@@ -239,27 +239,36 @@ void draw_sent(Pulse& p, Box box) {
 struct Key {
     const char* words;
     Stroke stroke;
-    bool dot = false;
 };
 
+/// In rows from the left, all of it, with smaller words where there is little room.
 void draw_legend(Pulse& p, Box box) {
-    const double line = 1.45 * p.small();
     const Key keys[] = {{"came back", {p.colours.ink, 3.4}},
                         {"rebuilt", {p.colours.wave, 2}},
                         {"joined dots", {p.colours.second, 1.8, 6, 3}},
                         {"error", {p.colours.warn.with_alpha(0.4), 8}}};
-    double x = box.x, y = box.y + 0.5 * line;
-    for (const Key& key : keys) {
-        const TextStyle words{p.colours.ink, p.small(), Across::left, Down::middle};
-        const double width = 24 + p.canvas.measure(key.words, words) + 12;
-        if (x + width > box.right() + 12) {
-            x = box.x;
-            y += line;
+    TextStyle words{p.colours.ink, p.small(), Across::left, Down::middle};
+    std::vector<Point> places;
+    const auto fits = [&] {
+        places.clear();
+        const double line = 1.45 * words.size;
+        double x = box.x, y = box.y + 0.5 * line;
+        for (const Key& key : keys) {
+            const double end = x + 24 + p.canvas.measure(key.words, words);
+            if (end > box.right() && x > box.x) x = box.x, y += line;
+            places.push_back({x, y});
+            x += 24 + p.canvas.measure(key.words, words) + 12;
         }
-        if (y + 0.5 * line > box.bottom() + 2) return;
-        p.canvas.line(points({Point{x, y}, Point{x + 18, y}}), key.stroke);
-        p.canvas.text({x + 24, y}, key.words, words);
-        x += width;
+        return y + 0.5 * line <= box.bottom() + 2;
+    };
+    while (!fits()) {
+        words.size *= 0.95;
+        if (words.size < 0.6 * p.small()) return;
+    }
+    for (std::size_t i = 0; i < places.size(); ++i) {
+        const Point at = places[i];
+        p.canvas.line(points({at, Point{at.x + 18, at.y}}), keys[i].stroke);
+        p.canvas.text({at.x + 24, at.y}, keys[i].words, words);
     }
 }
 

@@ -166,6 +166,35 @@ TEST_CASE("the words of a picture hold the numbers of the answers") {
     CHECK(site.find(std::to_string(answers.lanes.hits.size()) + " hits") != std::string::npos);
 }
 
+TEST_CASE("a phone with text half as large again still says what its grips drag, in both unit systems") {
+    for (const Plan& plan : {pipe_plan(), bars_plan(), footing_plan()}) {
+        const Answers answers = answers_for(plan);
+        for (const UnitSystem units : {UnitSystem::metric, UnitSystem::imperial}) {
+            for (const double text : {14.0, 17.5, 21.0}) {
+                FigureStyle style = style_of(367, 330);
+                style.units = units;
+                style.text = text;
+                const auto said = [&](std::size_t view) {
+                    return words_in(draw(views()[view], plan, answers, style).svg);
+                };
+                const auto length = [&](double metres) { return say(metres, Quantity::length, units); };
+                const auto check = [&](const std::string& all, const std::string& words) {
+                    CHECK_MESSAGE(all.find(words) != std::string::npos, plan.antenna.pulse.centre_frequency, " Hz, ",
+                                  text, " px: ", words);
+                };
+                check(said(0), length(plan.target.depth.likely));
+                check(said(0), "wavelength " + length(answers.beam.wavelength_at_target));
+                for (const char* key : {"came back", "rebuilt", "joined dots", "error"}) check(said(1), key);
+                check(said(1), say(plan.pass.window, Quantity::time, units));
+                check(said(2), length(plan.target.depth.likely) + " deep");
+                check(said(2), length(plan.target.gap));
+                check(said(3), std::to_string(answers.lanes.lines.size()) + " lines, ");
+                check(said(3), length(plan.lanes.spacing));
+            }
+        }
+    }
+}
+
 TEST_CASE("in print no grips are drawn, and a held one is drawn stronger") {
     const Plan plan = pipe_plan();
     const Answers answers = answers_for(plan);

@@ -101,6 +101,16 @@ inline Drawn draw(const ViewRow& view, const Plan& plan, const Answers& answers,
     return out;
 }
 
+/// The words that stand in the picture, a line each; not its description.
+inline std::string words_in(const std::string& svg) {
+    std::string out;
+    for (std::size_t i = svg.find("<text"); i != svg.npos; i = svg.find("<text", i + 1)) {
+        const std::size_t from = svg.find('>', i) + 1;
+        out += svg.substr(from, svg.find('<', from) - from) + '\n';
+    }
+    return out;
+}
+
 /// Empty when `xml` is well-formed as far as our own writer can go wrong: tags nest and close, attributes are quoted,
 /// no bare & or <, one root. Else what is wrong.
 inline std::string xml_fault(std::string_view xml) {
