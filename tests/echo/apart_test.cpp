@@ -90,6 +90,11 @@ TEST_CASE("Two echoes down one trace part where their envelopes dip, later the l
     const Dip clear = reading_of(1.2 / fp, 1.0);
     CHECK(std::fabs(clear.second - clear.first - 1.2 / fp) < 0.1 / fp);
     CHECK(!reading_of(1.2 / fp, 1.0, 0.3).apart());
+    // As the criterion says: three times the spread of a difference, but never less than a reading's 5 %.
+    const Dip loud = reading_of(1.2 / fp, 1.0, 0.1);
+    CHECK(std::fabs(loud.needed - 3.0 * std::sqrt(2.0) * 0.1 / loud.lower_peak) < 1e-12);
+    CHECK(clear.needed == 0.05);
+    CHECK(reading_of(1.2 / fp, 1.0, 0.005).needed == 0.05);
 }
 
 TEST_CASE("Two Ricker echoes part at a time apart of 0.618 periods, of one sign at 0.316; tuning lies between") {

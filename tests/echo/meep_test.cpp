@@ -71,30 +71,25 @@ std::vector<double> recorded(const std::string& name, std::size_t samples) {
     return all;
 }
 
-/// What the solver says: as many numbers as `computed` gives, and how much of them may be the solver's own error.
+/// What the solver says, as many numbers as `computed` gives.
 ///
-/// Without metal the solver's error falls with the square of its cell (with the cell itself where layers conduct well),
-/// so the two grids give what cells of no size would: fine + beyond_fine (fine - coarse). Measured, that leaves 0.1 to
-/// 0.7 %, so 1 % is held everywhere. Metal is drawn in whole cells, its error leaps from grid to grid and cannot be
-/// carried on: those scenes are compared with the fine grid, to 1 % or the error estimated from the two.
-struct Reference {
-    std::vector<double> traces;
-    double bound = 0.01;
-};
-Reference reference_for(const json& j, const json& recording) {
+/// Its error falls with the square of its cell (with the cell itself where layers conduct well), so the two grids give
+/// what cells of no size would: fine + beyond_fine (fine - coarse). That leaves 0.03 to 0.7 % between the solver and
+/// us, where the fine grid alone is up to 3 % off. Metal is drawn in whole cells and its error, 0.1 to 0.8 %, leaps
+/// from grid to grid: where there is nothing else the fine grid is taken as it is.
+std::vector<double> reference_for(const json& j, const json& recording) {
     const std::string name = j.at("name");
-    Reference r{recorded(name + "_fine.csv", j.at("samples"))};
-    const auto& targets = j.at("targets");
-    if (std::any_of(targets.begin(), targets.end(), [](const json& t) { return t.value("metal", false); })) {
-        r.bound = std::max(0.01, recording.at("rms_error_of_fine").get<double>());
-        return r;
-    }
+    std::vector<double> fine = recorded(name + "_fine.csv", j.at("samples"));
     const std::vector<double> coarse = recorded(name + "_coarse.csv", j.at("samples"));
-    REQUIRE(coarse.size() == r.traces.size());
+    REQUIRE(coarse.size() == fine.size());
+    const auto& targets = j.at("targets");
+    const auto is_metal = [](const json& t) { return t.value("metal", false); };
+    if (!targets.empty() && std::all_of(targets.begin(), targets.end(), is_metal)) return fine;
     const double beyond = recording.at("beyond_fine");
-    for (std::size_t i = 0; i < coarse.size(); ++i) r.traces[i] += beyond * (r.traces[i] - coarse[i]);
-    return r;
+    for (std::size_t i = 0; i < fine.size(); ++i) fine[i] += beyond * (fine[i] - coarse[i]);
+    return fine;
 }
+constexpr double bound = 0.01;
 
 /// All positions of the first separation, then of the next.
 std::vector<double> computed(const json& j, Scene s) {
@@ -149,14 +144,14 @@ int for_each_recording(const F& f) {
 
 }  // namespace
 
-TEST_CASE("The section agrees with a general-purpose finite-difference solver to 1 %, or to its error where metal is") {
+TEST_CASE("The section agrees with a general-purpose finite-difference solver to 1 % of the trace") {
     int across = 0;
-    const int compared = for_each_recording([&](const json& j, const Reference& theirs) {
-        const Fit f = fit(computed(j, scene_from(j)), theirs.traces);
+    const int compared = for_each_recording([&](const json& j, const std::vector<double>& theirs) {
+        const Fit f = fit(computed(j, scene_from(j)), theirs);
         MESSAGE(j.at("name").get<std::string>()
-                << ": " << 100.0 * f.off << " % RMS of " << 100.0 * theirs.bound << " %, scale " << f.scale);
-        CHECK(f.off < theirs.bound);
-        CHECK(std::fabs(f.scale - 1.0) < std::max(0.02, theirs.bound));  // both are V/m for 1 A: no factor is needed
+                << ": " << 100.0 * f.off << " % RMS of " << 100.0 * bound << " %, scale " << f.scale);
+        CHECK(f.off < bound);
+        CHECK(std::fabs(f.scale - 1.0) < 0.02);  // both are V/m for 1 A: no factor is needed
         across += j.at("polarisation") == "across" ? 1 : 0;
     });
     CHECK(compared >= 14);
@@ -164,13 +159,13 @@ TEST_CASE("The section agrees with a general-purpose finite-difference solver to
 }
 
 TEST_CASE("Set beside a slightly wrong scene the solver disagrees by far more") {
-    const auto misses = [](const json& j, const Reference& theirs, const std::string& wrong,
+    const auto misses = [](const json& j, const std::vector<double>& theirs, const std::string& wrong,
                            const std::vector<double>& ours) {
-        const double off = fit(ours, theirs.traces).off;
+        const double off = fit(ours, theirs).off;
         MESSAGE(j.at("name").get<std::string>() << ", " << wrong << ": " << 100.0 * off << " %");
-        CHECK(off > 5.0 * theirs.bound);
+        CHECK(off > 5.0 * bound);
     };
-    for_each_recording([&](const json& j, const Reference& theirs) {
+    for_each_recording([&](const json& j, const std::vector<double>& theirs) {
         const Scene right = scene_from(j);
         Scene turned = right;
         turned.polarisation = right.polarisation == Polarisation::along ? Polarisation::across : Polarisation::along;
@@ -192,7 +187,7 @@ TEST_CASE("Set beside a slightly wrong scene the solver disagrees by far more") 
             misses(j, theirs, "without its wall", computed(j, bare));
         }
         if (right.targets.size() > 1) {
-            std::vector<double> sum(theirs.traces.size());
+            std::vector<double> sum(theirs.size());
             for (const RoundTarget& t : right.targets) {
                 Scene alone = right;
                 alone.targets = {t};
