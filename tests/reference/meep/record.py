@@ -1,6 +1,6 @@
 """Records what a general-purpose finite-difference time-domain solver gives for each scene of scenes.json.
 
-Afresh, all scenes (about 40 minutes of one core) or the ones named:
+Afresh, all scenes (about an hour of one core) or the ones named:
     /usr/bin/python3 tests/reference/meep/record.py [NAME ...]
 Needs Debian's python3-meep, python3-numpy, python3-scipy and python3-matplotlib.
 
@@ -12,11 +12,11 @@ separation, V/m, rounded to 1e-6 of the scene's peak) and recorded.json, where
                      which shows where layers conduct well
   rms_error_of_fine  beyond_fine * rms_between_grids, the fine grid's own error
 
-Metal is drawn in whole cells, so its error leaps from grid to grid: extrapolating is of no use there. Where the field lies
-along it the solver's wall stands inside the radius asked for, by 0.28 to 0.43 of a cell on a lone bar in uniform ground set
-beside the exact series: so metal is drawn 0.35 of a cell larger there. Across it no radius sets it right: a lone bar of 20 or
-48 mm on cells of 1.5 to 3 mm is 4 to 11 % off, 2 to 11 % with the radius that fits it best. So no scene has metal with the
-field across; there the exact series alone speaks for it (tests/echo/scatterer_test.cpp).
+Metal is drawn in whole cells, so its error leaps from grid to grid: a scene with nothing else is compared on its fine grid, not
+extrapolated. Where the field lies along it the solver's wall stands inside the radius asked for, by 0.18 to 0.54 of a cell on a
+lone bar in uniform ground set beside the exact series (lone_bar.py), which makes 4 to 12 %: so metal is drawn 0.35 of a cell
+larger there. Across it no radius sets it right: 4 to 11 % off, and 2 to 11 % with the radius that fits best. So no scene has
+metal with the field across; there the exact series alone speaks for it (tests/echo/scatterer_test.cpp, section_test.cpp).
 
 The source is the Ricker current of scenes.json itself, so nothing has to be deconvolved. Solver units: length 1 m, c = 1,
 mu0 = eps0 = 1; a field in them times the impedance of vacuum is V/m per ampere. Conductivity is sigma / (eps0 eps_r) * 1 m / c.
