@@ -1,4 +1,5 @@
-// The same page in the other two engines, by their own drivers: opens, draws, takes a drag and a tap, keeps the plan.
+// The same page in the other two engines, by their own drivers: opens, draws, takes a drag and a tap, computes in a worker, keeps
+// the plan.
 // Both need a display: xvfb-run gives one.
 import assert from 'node:assert/strict';
 import { spawn } from 'node:child_process';
@@ -48,6 +49,10 @@ async function smoke({ run, drag, reload }) {
     await drag([x, y], [x, y + 40]);
     const dragged = await until(depth, (now) => JSON.stringify(now) !== JSON.stringify(before));
     await settled();
+    const [px, py] = middle(await control('view.pair'));
+    await drag([px, py], [px, py]);
+    await until(`return window.groundgrain.controls().find((c) => c.id === 'picture').value`, (value) => / raw, /.test(value));
+    assert.equal(await run('return window.groundgrain.reckoner().by'), 'worker');
     const [tx, ty] = middle(await control('view.lanes'));
     await drag([tx, ty], [tx, ty]);
     await until(`return window.groundgrain.controls().find((c) => c.id === 'view.lanes').value`, (value) => value !== '');

@@ -56,9 +56,9 @@ export class Visit {
         await this.page.waitForSelector('html[data-ready]', { state: 'attached', timeout: 30000 });
         await this.settle();
     }
-    /// Until no frame is asked for any more, and the mirror has caught up.
+    /// Until no frame is asked for any more, nothing is computed beside the page, and the mirror has caught up.
     async settle() {
-        await this.page.waitForFunction(() => window.groundgrain.settled(), null, { polling: 20, timeout: 15000 });
+        await this.page.waitForFunction(() => window.groundgrain.settled(), null, { polling: 20, timeout: 60000 });
         await this.page.waitForTimeout(160);
     }
     controls() {
