@@ -6,7 +6,6 @@
 
 #include "echo/engine.hpp"
 #include "echo/noise.hpp"
-#include "echo/still.hpp"
 #include "wave/fourier.hpp"
 
 namespace gg {
@@ -51,11 +50,11 @@ double time_to(const Scene& scene, double depth) {
 }
 double pulse_width(const Scene& scene) { return 1.0 / band_of(scene.pulse).width(); }
 
-/// Where in `envelope` the echo expected at `time` peaks.
+/// Where in `envelope` the echo expected at `time` peaks; close about it, as the neighbour's flank comes soon after.
 int peak_near(const std::vector<double>& envelope, double start, double dt, double time, double width) {
     const int n = static_cast<int>(envelope.size());
-    const int from = std::clamp(static_cast<int>((time - width - start) / dt), 0, n - 1);
-    const int to = std::clamp(static_cast<int>(std::ceil((time + 1.5 * width - start) / dt)), from, n - 1);
+    const int from = std::clamp(static_cast<int>((time - 0.5 * width - start) / dt), 0, n - 1);
+    const int to = std::clamp(static_cast<int>(std::ceil((time + 0.6 * width - start) / dt)), from, n - 1);
     return static_cast<int>(std::max_element(envelope.begin() + from, envelope.begin() + to + 1) - envelope.begin());
 }
 
@@ -85,6 +84,12 @@ Dip read(const Columns& c, double x1, double x2, double place1, double place2, d
         r[i] = *std::max_element(e.begin() + std::min(row1, row2), e.begin() + std::max(row1, row2) + 1);
     }
     Dip dip = dip_of(r, one, other, sigma);
+    // What stands in the middle counts, not the null beside it: where both flanks meet there and add, they look like
+    // one.
+    const double middle = 0.5 * (x1 + x2);
+    const double between =
+        *std::max_element(r.begin() + c.nearest(middle - 0.125 * gap), r.begin() + c.nearest(middle + 0.125 * gap) + 1);
+    if (dip.lower_peak > 0.0) dip.depth = std::clamp(1.0 - between / dip.lower_peak, 0.0, dip.depth);
     dip.first = c.first + dip.first * c.step;
     dip.second = c.first + dip.second * c.step;
     return dip;
@@ -222,7 +227,7 @@ class Neighbours {
         const double far = reading_ == Reading::raw ? 1.0 : std::hypot(aperture, depth) / depth;
         look_ = close_look(pair_, middle_, aperture, time_to(pair_, depth) * far);
         engine_.emplace(look_, glance, 0.5 * gap * (1.0 - 1.0 / range));
-        if (sigma_ < 0.0) sigma_ = noise_of(look_, noise_level(look_, still_of(look_, glance).direct), reading_);
+        if (sigma_ < 0.0) sigma_ = noise_of(look_, noise_level(look_), reading_);
     }
 
     Scene pair_, look_;
@@ -265,7 +270,7 @@ Dip dip_down_with(const Scene& scene, const std::vector<double>& record, double 
 double margin_down(const Scene& scene, double x) {
     const Scene look = close_look(scene, x, 0.0, scene.sampling.start + scene.sampling.window);
     if (!fault_of(look).empty()) return -1.0;
-    const double sigma = noise_level(look, still_of(look, glance).direct);
+    const double sigma = noise_level(look);
     std::vector<double> places;
     for (const RoundTarget& target : look.targets) places.push_back(target.x);
     return margin(dip_down_with(look, Engine(look, glance).echoes(places), sigma));

@@ -11,8 +11,10 @@ namespace gg {
 ///   - noise: an envelope that rides on white noise of root mean square sigma wavers by sigma, the difference of two by
 ///     sqrt(2) sigma; three times that is exceeded by chance once in 700 readings.
 ///   - reading: 5 % of the lower peak (0.4 dB), because coupling and height vary by about that from trace to trace
-///   however
-///     good the receiver is (common practice, no source). Without it a receiver free of noise would part anything.
+///     however good the receiver is (common practice, no source). Without it a receiver free of noise would part
+///     anything.
+/// Side by side, the dip is down to what stands in the middle: at small gaps the flanks of both hyperbolas meet there
+/// and add, brighter than either apex, with nulls of interference at its sides that are no gap between two.
 /// Rayleigh's 19 % would be the optical convention; it stands for a detector's noise that a radar's stacked traces do
 /// not have.
 struct Dip {
@@ -28,6 +30,7 @@ enum class Reading : std::uint8_t { raw, focused };
 /// Dip between the scene's first two targets side by side.
 /// Raw: the envelope along the row of first arrivals, the time at which the two apexes peak. Focused: the envelope
 /// along the depth of their tops in the migrated image. At the record's own positions: a step too coarse parts nothing.
+/// By travel times alone the middle sinks below the peaks where the flanks are half a pulse late, at 2 sqrt(v r W / 2).
 /// @param section  of this scene; its noise's level counts, not its particular values
 Dip dip_sideways(const Scene& scene, const Section& section, Reading reading);
 

@@ -46,13 +46,15 @@ Recording recording_of(const Scene& scene, double care) {
     return {scene, quiet - onset, arrivals.last + 4.0 * onset, scene.sampling.traces};
 }
 
-/// Distance over which an evanescent wave must fall by `fall` Np when it may first gain (kappa a)^n / n! from orders up
-/// to n.
-double evanescent_reach(double distance, double radius, int order, double fall) {
-    for (double kappa = fall / distance;; kappa *= 1.15) {
+/// Evanescence in the host, 1/m, from `start` on, at which a wave has lost `fall` Np on its way when it may first gain
+/// (kappa a)^n / n! from orders up to n.
+/// @param lost  Np, of kappa
+template <class Lost>
+double evanescent_reach(double start, double radius, int order, double fall, const Lost& lost) {
+    for (double kappa = start;; kappa *= 1.15) {
         double gain = 0.0, term = 0.0;
         for (int n = 1; n <= order; ++n) gain = std::max(gain, term += std::log(kappa * radius / n));
-        if (kappa * distance - gain >= fall) return kappa;
+        if (lost(kappa) - gain >= fall) return kappa;
     }
 }
 
@@ -165,8 +167,20 @@ Engine::Prepared Engine::prepare(const Tone& tone) {
         order[level_of_[q]] = std::max(order[level_of_[q]], n);
         const double above = levels_[level_of_[q]],
                      boundary = host_.endless() ? above : std::min(above, host_.thickness - above);
-        reach_in = std::max(reach_in, evanescent_reach(t.depth + scene_.height, t.radius, n, fall));
-        reach_between = std::max(reach_between, evanescent_reach(boundary, t.radius, n, 0.5 * fall));
+        // Down to the target: in a layer slower than the host the wave may not be evanescent at all.
+        const auto lost_down = [&](double kappa) {
+            const double k = host.k.real(), kx2 = k * k + kappa * kappa;
+            double lost = kappa * above;
+            for (int i = 0; i < host_.layer; ++i) {
+                const double own = media.ground[i].k.real();
+                lost += std::sqrt(std::max(0.0, kx2 - own * own)) *
+                        (i == 0 ? scene_.height : scene_.ground.slabs[static_cast<std::size_t>(i) - 1].thickness);
+            }
+            return lost;
+        };
+        reach_in = std::max(reach_in, evanescent_reach(fall / (t.depth + scene_.height), t.radius, n, fall, lost_down));
+        reach_between = std::max(reach_between, evanescent_reach(0.5 * fall / boundary, t.radius, n, 0.5 * fall,
+                                                                 [&](double kappa) { return kappa * boundary; }));
     }
     const double widest = std::hypot(host.k.real(), reach_in), dk = 2.0 * pi / grids_.track().period;
     const int count_in = static_cast<int>(widest / dk) + 2;

@@ -1,7 +1,11 @@
 #include "echo/noise.hpp"
 
+#include <algorithm>
 #include <array>
 #include <cmath>
+
+#include "echo/recording.hpp"
+#include "echo/still.hpp"
 
 namespace gg {
 namespace {
@@ -53,9 +57,16 @@ std::vector<double> white_noise(std::size_t count, double rms, std::uint64_t see
     return out;
 }
 
-double noise_level(const Scene& scene, const std::vector<double>& direct) {
+double noise_level(const Scene& scene) {
+    Scene look = scene;
+    const double f = scene.pulse.centre_frequency, onset = onset_of(scene.pulse);
+    const double speed = std::fmin(speed_of_light, speeds(scene.ground, f).front());
+    const double latest = (scene.separation + 2.0 * scene.height) / speed + onset;
+    look.sampling.start = -onset;
+    look.sampling.window = latest + onset;
+    look.sampling.samples = std::clamp(static_cast<int>(24.0 * f * look.sampling.window), 16, 8192);
     double peak = 0.0;
-    for (const double value : direct) peak = std::fmax(peak, std::fabs(value));
+    for (const double value : direct_of(look, 1.0)) peak = std::fmax(peak, std::fabs(value));
     return peak * std::pow(10.0, -scene.noise.dynamic_range / 20.0) / std::sqrt(scene.noise.stacks);
 }
 

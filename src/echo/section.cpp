@@ -48,10 +48,9 @@ Section section_of(const Scene& scene, double care) {
         scene.targets.empty()
             ? std::vector<double>(static_cast<std::size_t>(s.traces) * static_cast<std::size_t>(s.samples))
             : Engine(scene, care).echoes(places_of(scene));
-    Still still = still_of(scene, care);
-    section.layers = std::move(still.layers);
-    section.direct = std::move(still.direct);
-    section.noise = white_noise(section.targets.size(), noise_level(scene, section.direct), scene.noise.seed);
+    section.layers = layers_of(scene, care);
+    section.direct = direct_of(scene, care);
+    section.noise = white_noise(section.targets.size(), noise_level(scene), scene.noise.seed);
     return section;
 }
 

@@ -30,33 +30,40 @@ Complex layers_echo(const Scene& scene, const Media& media, double spacing, int 
     return spacing / (4.0 * pi) * constant * Complex(sum);
 }
 
+Recording recording_of(const Scene& scene) { return {scene, -onset_of(scene.pulse), 0.0, 1}; }
+
+/// The trace whose value at each tone is f(tone, media).
+template <class F>
+std::vector<double> trace_of(const Scene& scene, double care, const F& f) {
+    Recording recording = recording_of(scene);
+    for (const Tone& tone : recording.tones(faintest / care))
+        recording.add(0, tone, f(tone, media_at(scene, tone.w.real(), recording.delta())));
+    std::vector<double> out(static_cast<std::size_t>(scene.sampling.samples));
+    recording.trace(0, out.data());
+    return out;
+}
+
 }  // namespace
 
-Still still_of(const Scene& scene, double care) {
-    enum Row { layers, direct, rows };
-    Recording recording(scene, -onset_of(scene.pulse), 0.0, rows);
+std::vector<double> direct_of(const Scene& scene, double care) {
     const double nearest = speed_of_light / (20.0 * scene.pulse.centre_frequency);
-    const bool layered = scene.ground.slabs.size() > 1;
+    return trace_of(scene, care, [&](const Tone& /*tone*/, const Media& media) {
+        return direct_wave(media, std::max(scene.separation, nearest), scene.height, scene.polarisation);
+    });
+}
+
+std::vector<double> layers_of(const Scene& scene, double care) {
+    if (scene.ground.slabs.size() < 2) return std::vector<double>(static_cast<std::size_t>(scene.sampling.samples));
     // Along the surface images are not weak: they need the way of light in the recording's time.
-    const double spacing =
-        2.0 * pi / (speed_of_light * (recording.end() + onset_of(scene.pulse)) + 2.0 * scene.separation);
-    for (const Tone& tone : recording.tones(faintest / care)) {
-        const Media media = media_at(scene, tone.w.real(), recording.delta());
-        if (layered) {
-            // Evanescent waves go down to the first boundary and back.
-            const double fall = std::max(3.0, std::log(tone.loudness * care / tolerance));
-            const double reach = 0.5 * fall / (scene.ground.slabs[0].thickness + scene.height);
-            const int count = static_cast<int>(std::hypot(media.ground[1].k.real(), reach) / spacing) + 2;
-            recording.add(layers, tone, layers_echo(scene, media, spacing, count));
-        }
-        recording.add(direct, tone,
-                      direct_wave(media, std::max(scene.separation, nearest), scene.height, scene.polarisation));
-    }
-    Still still;
-    for (auto* trace : {&still.layers, &still.direct}) trace->resize(static_cast<std::size_t>(scene.sampling.samples));
-    recording.trace(layers, still.layers.data());
-    recording.trace(direct, still.direct.data());
-    return still;
+    const double onset = onset_of(scene.pulse), end = recording_of(scene).end();
+    const double spacing = 2.0 * pi / (speed_of_light * (end + onset) + 2.0 * scene.separation);
+    return trace_of(scene, care, [&](const Tone& tone, const Media& media) {
+        // Evanescent waves go down to the first boundary and back.
+        const double fall = std::max(3.0, std::log(tone.loudness * care / tolerance));
+        const double reach = 0.5 * fall / (scene.ground.slabs[0].thickness + scene.height);
+        const int count = static_cast<int>(std::hypot(media.ground[1].k.real(), reach) / spacing) + 2;
+        return layers_echo(scene, media, spacing, count);
+    });
 }
 
 }  // namespace gg

@@ -6,9 +6,9 @@
 
 namespace gg {
 
-struct Still {
-    std::vector<double> layers, direct;  ///< one trace each, see Section
-};
-Still still_of(const Scene& scene, double care);
+/// Through the air and off the surface; one trace, see Section.
+std::vector<double> direct_of(const Scene& scene, double care);
+/// Echoes of the boundaries below the surface; one trace.
+std::vector<double> layers_of(const Scene& scene, double care);
 
 }  // namespace gg
