@@ -10,7 +10,7 @@ namespace gg {
 namespace {
 
 constexpr double hidden = 5 * faintest;  // the ground takes the highest frequencies first
-constexpr double tolerance = 1e-4;       // of the strongest part, at the pulse's peak frequency
+constexpr double tolerance = 1e-5;       // of the strongest part, at the pulse's peak frequency
 
 Host host_of(const Scene& scene) {
     const int layer = layer_at(scene.ground, scene.targets[0].depth);

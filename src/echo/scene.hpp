@@ -97,7 +97,9 @@ Issue materials_issue(const Scene& scene);
 
 /// The section, from Maxwell's equations: multiple scattering between targets and with all boundaries is included.
 /// Between the samples of the scene nothing is smoothed: a step, window or interval too coarse shows as it would in the
-/// field. Accuracy: 1e-3 of the strongest echo; see section.cpp for what sets it.
+/// field. Accuracy: 1e-3 of the strongest echo (the median over
+/// random scenes of the largest deviation), 4e-3 in nine of ten, mostly late in the window; echoes more than 100 dB
+/// below the direct wave less well. See section.cpp for what sets it.
 /// @param care  0.01 to 100: every cut-off and margin of the engine tighter by it, at its price in time; above 1 to see
 /// what they cost, 0.1 where 1 % will do
 Section section_of(const Scene& scene, double care = 1.0);
