@@ -114,8 +114,9 @@ struct Answers {
 ///   apart.down .apart.sideways                                 smallest separation, centre to centre
 ///   smallest                                                   smallest size
 ///   pass.step .pass.window .pass.interval .pass.samples        largest step, window and interval needed, samples
-///   needed pass.hits .pass.per_cycle .pass.error .pass.reach          what the chosen ones give lanes.between_hits
-///   .lanes.hits .lanes.picture .lanes.swath
+///   pass.hits .pass.per_cycle .pass.error .pass.reach          what the chosen ones give
+///   lanes.between_hits .lanes.hits .lanes.picture .lanes.swath
+/// What settle() (survey/section.hpp) adds: apart.focused .apart.above .apart.through
 /// Aim: under 1 ms natively.
 Answers answers_for(const Plan& plan);
 
