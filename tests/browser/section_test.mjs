@@ -43,6 +43,9 @@ for (const device of ['phone', 'desktop'])
         await visit.page.waitForFunction(() => window.groundgrain.reckoner().answers >= 5, null, { polling: 50, timeout: 60000 });
         await visit.settle();
         assert.deepEqual(await reckoner(visit), { by: 'worker', waiting: false, answers: 5 });
+        const frames = await visit.frames();
+        await visit.page.waitForTimeout(3000);
+        assert.equal(await visit.frames(), frames, 'then nothing moves');
         assert.ok(await visit.find('section.gain'), 'the switches of a section are there');
         assert.match((await visit.answer('apart.sideways')).says, /\d/);
         assert.ok(await visit.answer('apart.focused'), 'the answers have taken in what was measured');
