@@ -309,7 +309,7 @@ Value smallest_gap(const Scene& scene, Reading reading) {
     const double low =
         std::max({std::sqrt(std::max(0.0, touch * touch - drop * drop)) * 1.01, 1e-3 * rule, 1.01 * 1e-4});
     Neighbours neighbours(scene, reading);
-    return smallest(low, std::max(6.0 * rule, 2.0 * low), reading == Reading::raw ? rule : 0.5 * rule,
+    return smallest(low, std::max(6.0 * rule, 2.0 * low), (reading == Reading::raw ? 2.0 : 0.5) * rule,
                     [&](double gap) { return neighbours.margin_at(gap); });
 }
 
