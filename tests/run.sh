@@ -116,7 +116,7 @@ if [ $fast = no ]; then
   if [ $page = no ]; then
     count "no page to open" 0 1
   elif step "browser drivers" npm --prefix tests/browser install --no-package-lock --no-audit --no-fund; then
-    node_tests "browsers" xvfb-run -a -s "-screen 0 1600x1200x24" \
+    node_tests "browsers" timeout 1800 xvfb-run -a -s "-screen 0 1600x1200x24" \
       node --test --test-reporter=tap tests/browser/*_test.mjs
   fi
 fi

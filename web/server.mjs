@@ -59,6 +59,7 @@ export function serve(folder, port = 0, address = '127.0.0.1') {
             resolve({
                 port: server.address().port,
                 requests,
+                unref: () => server.unref(), // goes on serving, but keeps nobody from ending
                 close: () => new Promise((done) => (server.close(done), server.closeAllConnections())),
             }),
         );

@@ -29,6 +29,7 @@ export class Visit {
         const visit = new Visit();
         visit.touch = Boolean(devices[device].hasTouch);
         visit.server = address ? null : await serve(folder);
+        visit.server?.unref(); // a test that fails leaves it open
         visit.address = address ?? `http://localhost:${visit.server.port}/`;
         visit.context = await browser.newContext({ ...devices[device], ...options });
         visit.complaints = [];
