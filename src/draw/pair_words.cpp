@@ -46,8 +46,8 @@ std::string PairWords::sentence() const {
         case PairPicture::Verdict::apart:
             return out += " show as two.";
         case PairPicture::Verdict::merging:
-            return out +=
-                   measured() && knows(*seen, Separation::Known::likely) ? " part only once focused." : " run together.";
+            return out += measured() && knows(*seen, Separation::Known::likely) ? " part only once focused."
+                                                                                : " run together.";
         case PairPicture::Verdict::one:
             return out += " look like one.";
     }

@@ -71,7 +71,8 @@ inline Scene random_scene(std::mt19937& random, bool dispersive = true) {
     s.height = chance(0.5) ? 0.0 : from(0.0, 0.3);
     const int layers = 1 + static_cast<int>(from(0, 3));
     for (int i = 0; i < layers; ++i) {
-        s.ground.slabs.push_back({constant_material(from(3, 20), from(0, 0.01)), from(0.36, 0.8)});
+        const double conductivity = from(0, 0.01);  // one draw a line: arguments are drawn in no order
+        s.ground.slabs.push_back({constant_material(from(3, 20), conductivity), from(0.36, 0.8)});
         if (dispersive && chance(0.25)) {
             Material soil;
             soil.model = Model::soil_p527;
