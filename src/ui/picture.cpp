@@ -37,7 +37,7 @@ static void hint_ui(Screen& s, Grip& grip) {
         grip.hint_since = -1.0;
         return;
     }
-    if (grip.figure.handles.empty()) return;
+    if (grip.figure.handles.empty() || !session.notice.empty()) return;  // a notice stands in its place
     const std::string words = s.areas.picture.width < 520 ? "Drag a grip" : "Drag a round grip: everything follows";
     const double width = std::min(s.areas.picture.width - 16, s.width_of(words, s.small) + 28),
                  height = 32 * s.text / 16;
