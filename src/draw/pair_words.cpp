@@ -30,7 +30,7 @@ static bool knows(const PairSection& seen, Separation::Known what) {
 bool PairWords::measured() const { return seen && seen->separation && seen->separation->raw.lower_peak > 0; }
 
 PairPicture::Verdict PairWords::verdict() const {
-    return measured() ? verdict_of(*seen->separation) : answers.pair.verdict;
+    return measured() ? verdict_of(*seen->separation, gap()) : answers.pair.verdict;
 }
 
 /// What was measured was so at the section's own gap, if that is of an earlier state of the plan.

@@ -50,12 +50,17 @@ double time_to(const Scene& scene, double depth) {
 }
 double pulse_width(const Scene& scene) { return 1.0 / band_of(scene.pulse).width(); }
 
-/// Where in `envelope` the echo expected at `time` peaks; close about it, as the neighbour's flank comes soon after.
+/// Where in `envelope` the echo expected at `time` peaks: the highest crest close about it, as the neighbour's flank
+/// comes soon after. Where there is none, its own flank buries it, and it is read at its time.
 int peak_near(const std::vector<double>& envelope, double start, double dt, double time, double width) {
-    const int n = static_cast<int>(envelope.size());
-    const int from = std::clamp(static_cast<int>((time - 0.5 * width - start) / dt), 0, n - 1);
-    const int to = std::clamp(static_cast<int>(std::ceil((time + 0.6 * width - start) / dt)), from, n - 1);
-    return static_cast<int>(std::max_element(envelope.begin() + from, envelope.begin() + to + 1) - envelope.begin());
+    const int last = static_cast<int>(envelope.size()) - 1;
+    const auto place = [&](double t) { return std::clamp(static_cast<int>(std::lround((t - start) / dt)), 0, last); };
+    int best = -1;
+    for (int i = std::max(1, place(time - 0.5 * width)); i <= std::min(last - 1, place(time + 0.6 * width)); ++i) {
+        const bool crest = envelope[i] >= envelope[i - 1] && envelope[i] > envelope[i + 1];
+        if (crest && (best < 0 || envelope[i] > envelope[best])) best = i;
+    }
+    return best >= 0 ? best : place(time);
 }
 
 struct Columns {

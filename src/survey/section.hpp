@@ -93,7 +93,8 @@ void read_separation(const Scene& scene, const Section& section, Reading reading
 
 /// Apart: in the raw section; merging: only once focused; one: in neither. As long as only the raw section is known,
 /// merging: there is a dip, too shallow to count.
-PairPicture::Verdict verdict_of(const Separation& separation);
+/// @param gap  m, the plan's own
+PairPicture::Verdict verdict_of(const Separation& separation, double gap);
 
 /// Puts what was measured in the place of what travel times tell: the answer "apart.sideways" becomes the least gap in
 /// the raw section (the travel-time value stands beside it as a rule), "apart.focused" is added, and the verdict of the

@@ -6,11 +6,20 @@
 
 namespace gg {
 
-PairPicture::Verdict verdict_of(const Separation& separation) {
+/// A dip by chance below the least gap, from which on they are two, is none.
+static bool parts(const Dip& dip, const Value& least, double gap) {
+    constexpr double found = 0.97;  // least gaps are found to 3 %
+    return dip.apart() && least.ok() && gap >= found * least.value;
+}
+
+PairPicture::Verdict verdict_of(const Separation& separation, double gap) {
     using Verdict = PairPicture::Verdict;
-    if (separation.known < Separation::Known::likely && !separation.raw.apart())
-        return separation.raw.depth > 0.0 ? Verdict::merging : Verdict::one;
-    return separation.raw.apart() ? Verdict::apart : separation.focused.apart() ? Verdict::merging : Verdict::one;
+    const Dip& raw = separation.raw;
+    if (separation.known == Separation::Known::dip ? raw.apart() : parts(raw, separation.least_raw, gap))
+        return Verdict::apart;
+    if (separation.known >= Separation::Known::likely)
+        return parts(separation.focused, separation.least_focused, gap) ? Verdict::merging : Verdict::one;
+    return raw.depth > 0.0 ? Verdict::merging : Verdict::one;
 }
 
 static constexpr std::string_view kept_ratio = " The range keeps the ratio that travel times give it.";
@@ -52,7 +61,7 @@ static void settle_likely(Answers& answers, const Plan& plan, const Separation& 
     focused.why = "Once focused: " + focused.why;
     quick = measured;
     answers.list.insert(answers.list.begin() + (&quick - answers.list.data()) + 1, focused);
-    answers.pair.verdict = verdict_of(separation);
+    answers.pair.verdict = verdict_of(separation, plan.target.gap);
     answers.pair.dip = separation.raw.depth;
 }
 

@@ -162,7 +162,7 @@ TEST_CASE("the least gaps are searched once for all gaps of a plan, and hold for
             CHECK(s.known == once.known);
             CHECK(s.least_raw == fresh.least_raw);
             CHECK(s.least_focused == fresh.least_focused);
-            CHECK(verdict_of(s) == verdict_of(fresh));
+            CHECK(verdict_of(s, gap) == verdict_of(fresh, gap));
         }
         same(held.raw, raw_dip(scene_for(plan)));
         same(rested.raw, fresh.raw);
@@ -225,4 +225,24 @@ TEST_CASE("answers that are cut short, too long or garbled are refused, or are s
     }
     for (const char* wrong : {"", "gg-pair", "gg-pair\n", "{}", "gg-pair\n\xff\xff\xff\xff\xff\xff\xff\xff\xff\xff"})
         CHECK(!read_answer(wrong));
+}
+
+TEST_CASE("in the demo plans the raw section parts two where travel times say, to a fifth, and focusing does sooner") {
+    // Two ways that share nothing but the ground: Maxwell's equations with a dip of 5 percent, and refracted rays with
+    // the returned pulse and a dip of 19 percent.
+    for (const Demo& demo : demos()) {
+        CAPTURE(demo.name);
+        const Plan plan = read_plan(demo.json).plan;
+        const Answers answers = settled_answers_for(plan);
+        const Answer* sideways = answers.find("apart.sideways");
+        REQUIRE(sideways);
+        REQUIRE(sideways->likely.ok());
+        const double travel = sideways->rules.back().value, ratio = sideways->likely.value / travel;
+        CHECK(ratio > 0.8);
+        CHECK(ratio < 1.2);
+        REQUIRE(answers.find("apart.focused"));
+        CHECK(answers.find("apart.focused")->likely.value < 0.7 * sideways->likely.value);
+        const bool apart = plan.target.count > 1 && plan.target.gap >= sideways->likely.value;
+        CHECK((answers.pair.verdict == PairPicture::Verdict::apart) == apart);
+    }
 }
