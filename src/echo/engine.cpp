@@ -10,7 +10,8 @@ namespace gg {
 namespace {
 
 constexpr double hidden = 5 * faintest;  // the ground takes the highest frequencies first
-constexpr double tolerance = 1e-5;       // of the strongest part, at the pulse's peak frequency
+constexpr double tolerance = 1e-5;       // that evanescent waves are followed to, at the pulse's peak frequency
+constexpr double least_share = 1e-4;     // of orders and of rows, of the strongest, at the same
 
 Host host_of(const Scene& scene) {
     const int layer = layer_at(scene.ground, scene.targets[0].depth);
@@ -143,7 +144,7 @@ Engine::Prepared Engine::prepare(const Tone& tone) {
     const Media media = media_at(scene_, tone.w.real(), recording_.delta());
     const Inner& host = media.ground[host_.layer];
     const double fall = std::max(3.0, std::log(tone.loudness * care_ / tolerance));
-    const double share = std::min(0.05, tolerance / care_ / tone.loudness);
+    const double share = std::min(0.05, least_share / care_ / tone.loudness);
     const bool along = scene_.polarisation == Polarisation::along;
 
     std::vector<std::vector<Complex>> s(kinds_.size());

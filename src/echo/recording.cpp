@@ -35,6 +35,7 @@ Recording::Recording(const Scene& scene, double from, double to, int rows) : pul
     }
     bins_ = static_cast<std::size_t>(size_) / 2 + 1;
     field_.resize(static_cast<std::size_t>(rows) * bins_);
+    half_.resize(bins_);
     time_.resize(static_cast<std::size_t>(size_));
 }
 
@@ -55,17 +56,19 @@ void Recording::add(int row, const Tone& tone, Complex value) {
     const int at = tone.k % size_, bin = std::min(at, size_ - at);
     const bool edge = tone.k > 0 && (bin == 0 || 2 * bin == size_);
     value *= tone.source;
-    field_[static_cast<std::size_t>(row) * bins_ + static_cast<std::size_t>(bin)] += edge ? Complex{2.0 * value.real()}
-                                                                                     : at > size_ / 2 ? std::conj(value)
-                                                                                                      : value;
+    if (edge) value = 2.0 * value.real();
+    if (at > size_ / 2) value = std::conj(value);
+    field_[static_cast<std::size_t>(row) * bins_ + static_cast<std::size_t>(bin)] += std::complex<float>(value);
 }
 
 void Recording::trace(int row, double* out) {
-    transform_.sum_real(field_.data() + static_cast<std::size_t>(row) * bins_, time_.data(), size_);
+    const std::size_t from = static_cast<std::size_t>(row) * bins_;
+    for (std::size_t i = 0; i < bins_; ++i) half_[i] = field_[from + i];
+    transform_.sum_real(half_.data(), time_.data(), size_);
     for (int i = 0; i < static_cast<int>(gain_.size()); ++i)
         out[i] = gain_[i] > 0.0 ? gain_[i] * time_[static_cast<std::size_t>(i + lead_)] : 0.0;
 }
 
-void Recording::clear() { std::fill(field_.begin(), field_.end(), Complex{}); }
+void Recording::clear() { std::fill(field_.begin(), field_.end(), std::complex<float>{}); }
 
 }  // namespace gg

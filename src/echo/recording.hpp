@@ -1,5 +1,6 @@
 #pragma once
 /// From frequencies w - j delta to traces: one inverse transform per trace, exp(+delta t) undone.
+#include <complex>
 #include <vector>
 
 #include "echo/scene.hpp"
@@ -49,7 +50,8 @@ class Recording {
     int size_ = 0, lead_ = 0;   ///< samples; those before the first wanted one, negative: it comes after that
     std::vector<double> gain_;  ///< undoes the damping, sample by sample
     std::size_t bins_ = 0;
-    std::vector<Complex> field_;  ///< rows of half spectra
+    std::vector<std::complex<float>> field_;  ///< rows of half spectra
+    std::vector<Complex> half_;               ///< one of them
     std::vector<double> time_;
     Transform transform_;
 };
