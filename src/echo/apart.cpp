@@ -276,9 +276,7 @@ double margin_down(const Scene& scene, double x) {
     const Scene look = close_look(scene, x, 0.0, scene.sampling.start + scene.sampling.window);
     if (!fault_of(look).empty()) return -1.0;
     const double sigma = noise_level(look);
-    std::vector<double> places;
-    for (const RoundTarget& target : look.targets) places.push_back(target.x);
-    return margin(dip_down_with(look, Engine(look, glance).echoes(places), sigma));
+    return margin(dip_down_with(look, Engine(look, glance).echoes(), sigma));
 }
 
 }  // namespace

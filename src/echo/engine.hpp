@@ -18,6 +18,8 @@ class Engine {
 
     /// Section::targets with the targets at `x` (m, one each, none farther from the scene's than the spread).
     std::vector<double> echoes(const std::vector<double>& x);
+    /// The same with the targets where the scene has them.
+    std::vector<double> echoes() { return echoes(x_); }
 
   private:
     /// Of one tone, all that does not depend on the targets' places.

@@ -23,12 +23,6 @@ Section refused(Issue issue, std::string reason) {
     return section;
 }
 
-std::vector<double> places_of(const Scene& scene) {
-    std::vector<double> out;
-    for (const RoundTarget& target : scene.targets) out.push_back(target.x);
-    return out;
-}
-
 }  // namespace
 
 Section section_of(const Scene& scene, double care) {
@@ -47,7 +41,7 @@ Section section_of(const Scene& scene, double care) {
     section.targets =
         scene.targets.empty()
             ? std::vector<double>(static_cast<std::size_t>(s.traces) * static_cast<std::size_t>(s.samples))
-            : Engine(scene, care).echoes(places_of(scene));
+            : Engine(scene, care).echoes();
     section.layers = layers_of(scene, care);
     section.direct = direct_of(scene, care);
     section.noise = white_noise(section.targets.size(), noise_level(scene), scene.noise.seed);
